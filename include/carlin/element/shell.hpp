@@ -1,0 +1,56 @@
+#pragma once
+
+#include "carlin/core/types.hpp"
+#include "carlin/section/shell_section.hpp"
+
+#include <array>
+
+namespace carlin
+{
+using QuadPoints = std::array<Vector3, 4>;
+
+/// Four-node shell, six freedoms a node in global axes (u v w r_x r_y r_z).
+/// Transverse shear by assumed strains at the mid-sides (Dvorkin & Bathe 1984); membrane with
+/// incompatible modes (Taylor, Beresford & Wilson 1976), condensed out; drilling: mean corner
+/// rotation tied to the in-plane rotation at the centre, one point, 0.1 G t, and 1e-3 G t two by
+/// two (after Hughes & Brezzi 1989); warped quads as flat mean plane with rigid offsets. The
+/// section's material x axis is `material_axis` projected on the mean plane.
+
+/// @return Symmetric 24 x 24, global axes [N/m, N, N m].
+Matrix24 shell_stiffness(const QuadPoints& points, const ShellSection& section,
+                         const Vector3& material_axis);
+
+/// Consistent mass incl. rotary inertia of the section; exact for rigid translation and rotation.
+Matrix24 shell_mass(const QuadPoints& points, const ShellSection& section);
+
+/// Work-equivalent nodal forces of a uniform pressure [Pa] along the normal (right-hand side).
+Vector24 shell_pressure(const QuadPoints& points, double pressure);
+
+/// Work-equivalent nodal forces of free thermal strain: uniform rise [K].
+Vector24 shell_thermal(const QuadPoints& points, const ShellSection& section,
+                       const Vector3& material_axis, double temperature_rise);
+
+double shell_area(const QuadPoints& points); ///< of the mean plane's projection [m^2]
+
+/// Local frame: columns are the local x, y, z axes; z the normal by the right hand.
+/// x is `material_axis` projected on the mean plane.
+Matrix3 shell_frame(const QuadPoints& points, const Vector3& material_axis);
+
+/// Strains and resultants in the local frame of shell_frame.
+struct ShellState
+{
+  Vector3 membrane = Vector3::Zero();    ///< eps_x eps_y gamma_xy of the reference surface [-]
+  Vector3 curvature = Vector3::Zero();   ///< [1/m]
+  Vector2 shear = Vector2::Zero();       ///< [-]
+  Vector3 force = Vector3::Zero();       ///< N [N/m]
+  Vector3 moment = Vector3::Zero();      ///< M about the reference surface [N]
+  Vector2 shear_force = Vector2::Zero(); ///< Q [N/m]
+};
+
+/// State at natural coordinates (xi, eta) in -1..1 from nodal displacements in global axes.
+/// @param temperature_rise Uniform [K]; its free strain is taken off before resultants.
+ShellState shell_state(const QuadPoints& points, const ShellSection& section,
+                       const Vector3& material_axis, const Vector24& displacement, double xi,
+                       double eta, double temperature_rise);
+
+} // namespace carlin

@@ -1,0 +1,1 @@
+#include "carlin/checks/checks.hpp"

@@ -1,0 +1,2 @@
+#include "carlin/job/job.hpp"
+int main() { return 3; }

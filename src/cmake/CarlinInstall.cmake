@@ -1,0 +1,2 @@
+include(GNUInstallDirs)
+install(TARGETS carlin_command RUNTIME DESTINATION ${CMAKE_INSTALL_BINDIR})

@@ -1,0 +1,1 @@
+#include "carlin/core/quantity.hpp"

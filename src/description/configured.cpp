@@ -1,0 +1,1 @@
+#include "carlin/description/model.hpp"

@@ -1,0 +1,1 @@
+#include "carlin/element/shell.hpp"

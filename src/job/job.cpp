@@ -1,0 +1,1 @@
+#include "carlin/job/job.hpp"

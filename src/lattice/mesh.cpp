@@ -1,0 +1,1 @@
+#include "carlin/lattice/mesh.hpp"

@@ -1,0 +1,1 @@
+#include "carlin/loads/loads.hpp"

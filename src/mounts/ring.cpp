@@ -1,0 +1,1 @@
+#include "carlin/mounts/ring.hpp"

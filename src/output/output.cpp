@@ -1,0 +1,1 @@
+#include "carlin/output/output.hpp"

@@ -1,0 +1,1 @@
+#include "carlin/recovery/recovery.hpp"

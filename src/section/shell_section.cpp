@@ -1,0 +1,1 @@
+#include "carlin/section/shell_section.hpp"

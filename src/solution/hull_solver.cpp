@@ -1,0 +1,1 @@
+#include "carlin/solution/hull_solver.hpp"

@@ -1,0 +1,1 @@
+#include "carlin/structure/structure.hpp"
