@@ -45,6 +45,9 @@ std::string_view unit_of(Dimension dimension);
 /// Name of a dimension in words, for messages: "a length", "a pressure".
 std::string_view name_of(Dimension dimension);
 
+/// What to write, for messages and the reference: "6 mm", "210 GPa".
+std::string_view example_of(Dimension dimension);
+
 /// Value in SI of a quantity written with its unit: "6 mm" -> 0.006, "210 GPa" -> 2.1e11.
 /// Angles are returned in rad. A dimensionless quantity takes a bare number or a percentage ("8
 /// %").
@@ -53,4 +56,9 @@ std::string_view name_of(Dimension dimension);
 ///   the look-alikes `kn`/`Kn` (is it knot or kN?).
 /// Source of unit definitions: the UDUNITS-2 database.
 double quantity_in_si(std::string_view text, Dimension dimension);
+
+/// Value in SI of a quantity of whatever dimension its unit says; for limits whose dimension
+/// another stage knows. A bare number is dimensionless.
+/// @throws ValueError as above; also for "3 g", which may be a mass or an acceleration.
+double quantity_of_any_dimension(std::string_view text);
 } // namespace carlin
