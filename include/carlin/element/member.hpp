@@ -24,11 +24,17 @@ struct MemberFrame
 MemberFrame member_frame(const MemberGeometry& geometry);
 
 /// Two-node Timoshenko beam in space with rigid arms; exact at nodes for end loads
-/// (Przemieniecki 1968, sec. 5.6, shear parameters kept). Saint-Venant torsion: no warping freedom.
+/// (Przemieniecki 1968, sec. 5.6, shear parameters kept), from the flexibility of the cantilever,
+/// so that the product moment needs no turning to principal axes. Saint-Venant torsion: no warping
+/// freedom. The member twists about its shear centre: a force through the centroid turns it, one
+/// through the shear centre does not.
 /// @return 12 x 12 in global axes at the nodes.
+/// @throws ValueError if the ends coincide, `upright` runs along the member, or a stiffness is not
+///   positive (infinite shear stiffness is allowed), as all functions below.
 Matrix12 member_stiffness(const MemberGeometry& geometry, const MemberSection& section);
 
-/// Consistent mass with rotary inertia about the axis; exact for rigid motion.
+/// Consistent mass (cubic deflection, linear stretch and twist) with rotary inertia; exact for
+/// rigid motion.
 Matrix12 member_mass(const MemberGeometry& geometry, const MemberSection& section);
 
 /// Work-equivalent nodal forces of a line load on the centroid line [N/m], global axes.

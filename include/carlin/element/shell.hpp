@@ -15,6 +15,13 @@ using QuadPoints = std::array<Vector3, 4>;
 /// rotation tied to the in-plane rotation at the centre, one point, 0.1 G t, and 1e-3 G t two by
 /// two (after Hughes & Brezzi 1989); warped quads as flat mean plane with rigid offsets. The
 /// section's material x axis is `material_axis` projected on the mean plane.
+///
+/// A triangle repeats its third point as the fourth: constant-strain membrane and curvature,
+/// three-node assumed shear (Lee & Bathe 2004), the same drilling tie. All 24 rows remain; those
+/// of the fourth node are zero. Natural coordinates are those of the collapsed quad.
+///
+/// All functions throw ValueError if the points enclose no area, if a corner is re-entrant, or if
+/// the material axis is normal to the mean plane.
 
 /// @return Symmetric 24 x 24, global axes [N/m, N, N m].
 Matrix24 shell_stiffness(const QuadPoints& points, const ShellSection& section,
@@ -23,7 +30,9 @@ Matrix24 shell_stiffness(const QuadPoints& points, const ShellSection& section,
 /// Consistent mass incl. rotary inertia of the section; exact for rigid translation and rotation.
 Matrix24 shell_mass(const QuadPoints& points, const ShellSection& section);
 
-/// Work-equivalent nodal forces of a uniform pressure [Pa] along the normal (right-hand side).
+/// Work-equivalent nodal forces of a uniform pressure [Pa] along the normal (right-hand side),
+/// taken on the doubly ruled surface through the points: on a closed surface forces and moments sum
+/// to zero exactly.
 Vector24 shell_pressure(const QuadPoints& points, double pressure);
 
 /// Work-equivalent nodal forces of free thermal strain: uniform rise [K].
@@ -46,6 +55,13 @@ struct ShellState
   Vector3 moment = Vector3::Zero();      ///< M about the reference surface [N]
   Vector2 shear_force = Vector2::Zero(); ///< Q [N/m]
 };
+
+/// Generalised strains per nodal displacement: 8 x 24, rows (eps_x eps_y gamma_xy, kappa_x kappa_y
+/// kappa_xy, gamma_xz gamma_yz) in the frame of shell_frame, columns as the stiffness. Serves every
+/// load case of one element; the incompatible modes are included.
+using ShellStrainMatrix = Eigen::Matrix<double, 8, 24>;
+ShellStrainMatrix shell_strain_matrix(const QuadPoints& points, const ShellSection& section,
+                                      const Vector3& material_axis, double xi, double eta);
 
 /// State at natural coordinates (xi, eta) in -1..1 from nodal displacements in global axes.
 /// @param temperature_rise Uniform [K]; its free strain is taken off before resultants.

@@ -26,8 +26,14 @@ struct ProfileConstants
   std::vector<Vector2> stress_points;
 };
 
-/// Constants in closed form. Thin-walled shapes by their mid-lines; a flat bar exactly.
-/// Shear areas from the energy of the shear flow (rectangle 5/6). @throws ValueError.
+/// Constants in closed form. Heights stand on the plating (z = 0 at the foot); the web of tee and
+/// angle ends where the flange begins, so that the depth is web height plus flange thickness; the
+/// angle's heel is flush with its web and its flange points to +y; diameter, height and width of
+/// tube and box are outside ones. Area and second moments are those of the drawn outline. Torsion:
+/// flat bar by the exact series, tube exactly, tee and angle as the sum of b t^3 / 3 of their
+/// walls, box by Bredt. Shear areas from the energy of the shear flow along mid-lines (rectangle
+/// 5/6; tube by Cowper 1966 at Poisson's ratio 0), shear centre from its moment.
+/// @throws ValueError for a dimension out of range, by name.
 ProfileConstants flat_bar_constants(double height, double thickness);
 ProfileConstants tee_constants(double web_height, double web_thickness, double flange_width,
                                double flange_thickness);
@@ -53,6 +59,7 @@ struct MemberSection
   ProfileConstants profile;
 };
 
+/// @throws ValueError for a constant or material value out of range, by name.
 MemberSection member_section(const ProfileConstants& profile, double youngs_modulus,
                              double poissons_ratio, double density, double thermal_expansion);
 } // namespace carlin

@@ -1,1 +1,0 @@
-#include "carlin/element/shell.hpp"
