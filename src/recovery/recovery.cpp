@@ -1,1 +1,0 @@
-#include "carlin/recovery/recovery.hpp"
