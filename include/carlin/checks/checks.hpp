@@ -35,19 +35,28 @@ struct Check
   std::string remark;          ///< "mesh too coarse here: 3 cells across", "ask the maker for ..."
 };
 
-/// Fills utilisation and verdict from demand, limit and sense.
+/// Fills utilisation and verdict from demand, limit and sense: met up to a utilisation of 1.
+/// Demands count by magnitude; of limits from below the sign counts, and nothing left is not met. A
+/// limit of 0 allows nothing. Without a limit there is no utilisation and the check is not judged.
 Check judged(Check check);
+
+/// Order of tables: not met, not judged (said before what is met), met; each by utilisation, then
+/// by demand.
+bool is_worse(const Check& a, const Check& b);
 
 /// A criterion with its default limit, overridable in the model by name.
 struct Criterion
 {
-  std::string name; ///< key in the model file
-  std::string text; ///< what it limits
-  std::string dimension_unit;
-  double default_limit = 0.0;
+  std::string name;                    ///< key in the model file
+  std::string text;                    ///< what it limits
+  std::string dimension_unit;          ///< SI; "-" for a number
+  std::optional<double> default_limit; ///< absent: not judged unless the model gives one
   std::string formula, source;
 };
 const std::vector<Criterion>& known_criteria();
+
+/// Limit of a criterion: the model's, or the default. @pre `name` is one of known_criteria().
+std::optional<double> criterion_limit(const Model& model, const std::string& name);
 
 /// All stages of one case on one configuration.
 struct CaseSolution
@@ -63,8 +72,9 @@ struct ConfigurationSolution
   ConfiguredCraft craft;
   std::shared_ptr<const Mesh> mesh;
   std::shared_ptr<const Structure> structure;
-  MassProperties mass_properties;      ///< tanks as they are aboard, full
-  std::vector<MassEntry> mass_account; ///< incl. tanks and contents
+  std::shared_ptr<const HullSolver> solver; ///< empty on a rigid bed
+  MassProperties mass_properties;           ///< tanks as they are aboard, full
+  std::vector<MassEntry> mass_account;      ///< incl. tanks and contents
   std::vector<Panel> panels;
   GirderStiffness stiffness;
   std::vector<CaseSolution> cases;

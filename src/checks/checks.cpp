@@ -1,1 +1,0 @@
-#include "carlin/checks/checks.hpp"

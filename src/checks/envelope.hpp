@@ -1,0 +1,79 @@
+#pragma once
+
+#include "carlin/checks/checks.hpp"
+
+#include <map>
+#include <optional>
+#include <string>
+#include <utility>
+#include <vector>
+
+namespace carlin
+{
+/// What all checks of one configuration need to know.
+struct CheckContext
+{
+  const Model& model;
+  const ConfigurationSolution& configuration;
+};
+
+/// What all checks of one stage need to know.
+struct StageContext
+{
+  const Model& model;
+  const ConfigurationSolution& configuration;
+  const CaseSolution& load_case;
+  const StageSolution& stage;
+};
+
+/// Keeps the worst of all checks of the same criterion and subject.
+class Envelope
+{
+public:
+  explicit Envelope(const ConfigurationSolution& configuration) : configuration_(configuration) {}
+
+  /// Judges a check and keeps it if it is the worst of its name and subject so far.
+  /// @param position Where; put into words only for what is kept in the end. None: no place.
+  void put(Check check, const std::optional<Vector3>& position);
+  /// The same for one whose verdict is already filled in.
+  void put_judged(Check check, const std::optional<Vector3>& position);
+
+  /// All that were kept, worst first.
+  std::vector<Check> checks() const;
+
+private:
+  const ConfigurationSolution& configuration_;
+  std::map<std::pair<std::string, std::string>, std::pair<Check, std::optional<Vector3>>> worst_;
+};
+
+/// A check with what the stage says about it: configuration, case, stage and class.
+Check stage_check(const StageContext& context, std::string name, std::string subject);
+
+/// Name of the criterion with limits of its own for each class: "plate_stress" -> "..._rare".
+std::string class_criterion(const std::string& name, CaseClass load_class);
+
+/// The criterion's formula and source; the model where the limit was given there.
+void cite(Check& check, const Model& model, const std::string& criterion);
+
+void add_stress_checks(const StageContext& context, Envelope& envelope);
+void add_deflection_checks(const StageContext& context, Envelope& envelope);
+void add_mount_checks(const StageContext& context, Envelope& envelope);
+void add_stiffness_checks(const CheckContext& context, const ConfigurationSolution& base,
+                          Envelope& envelope);
+
+/// Yield of the material of a part, welded where it is known.
+struct PartStrength
+{
+  std::string material;
+  std::optional<double> yield; ///< [Pa]
+  bool is_welded = false;
+  double youngs_modulus = 0.0, poissons_ratio = 0.0;
+};
+PartStrength part_strength(const Model& model, const MeshPart& part);
+
+/// "mesh too coarse here: 3 cells across" below the count from which bending is trusted; else
+/// empty.
+std::string coarse_remark(const Panel& panel);
+/// Parts of a remark that are not empty, with "; " between them.
+std::string joined_remarks(const std::vector<std::string>& remarks);
+} // namespace carlin

@@ -1,0 +1,72 @@
+#include "envelope.hpp"
+
+#include <algorithm>
+#include <fmt/format.h>
+
+namespace carlin
+{
+namespace
+{
+struct Ratio
+{
+  std::string name, criterion, load_case;
+  double found = 0.0;
+};
+
+void add_ratio(const CheckContext& context, const BayStiffness& bay, const std::string& subject,
+               const Ratio& ratio, const std::string& weight_remark, Envelope& envelope)
+{
+  Check check;
+  check.name = ratio.name;
+  check.subject = subject;
+  check.configuration = context.configuration.craft.name;
+  check.load_case = ratio.load_case;
+  check.demand = ratio.found;
+  check.limit_from_below = true;
+  check.unit = "-";
+  cite(check, context.model, ratio.criterion);
+  if (bay.near_loaded_section)
+    check.remark = "within one depth of a loaded end section: shown, not judged";
+  else
+    check.limit = criterion_limit(context.model, ratio.criterion);
+  check.remark = joined_remarks({check.remark, weight_remark});
+  envelope.put(std::move(check), std::nullopt);
+}
+
+void add_bay(const CheckContext& context, const BayStiffness& bay, const BayStiffness& base,
+             const std::string& subject, const std::string& weight_remark, Envelope& envelope)
+{
+  add_ratio(
+      context, bay, subject,
+      {"bending stiffness", "bending_stiffness_ratio", "unit bending", bay.bending / base.bending},
+      weight_remark, envelope);
+  add_ratio(context, bay, subject,
+            {"torsional stiffness", "torsion_stiffness_ratio", "unit torsion",
+             bay.torsion / base.torsion},
+            weight_remark, envelope);
+}
+} // namespace
+
+void add_stiffness_checks(const CheckContext& context, const ConfigurationSolution& base,
+                          Envelope& envelope)
+{
+  const GirderStiffness& found = context.configuration.stiffness;
+  if (context.configuration.craft.standing == Standing::base || found.bays.empty() ||
+      base.stiffness.bays.empty())
+    return;
+  std::string weight;
+  if (base.mass_properties.mass > 0.0)
+    weight = fmt::format("the craft weighs {:.3f} times the base",
+                         context.configuration.mass_properties.mass / base.mass_properties.mass);
+  for (const BayStiffness& bay : found.bays)
+  {
+    const auto same =
+        std::ranges::find_if(base.stiffness.bays, [&](const BayStiffness& other)
+                             { return other.from == bay.from && other.to == bay.to; });
+    if (same != base.stiffness.bays.end())
+      add_bay(context, bay, *same, bay.from + " to " + bay.to, weight, envelope);
+  }
+  add_bay(context, found.whole, base.stiffness.whole,
+          "whole, " + found.whole.from + " to " + found.whole.to, weight, envelope);
+}
+} // namespace carlin
