@@ -1,1 +1,0 @@
-#include "carlin/output/output.hpp"

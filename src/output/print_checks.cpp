@@ -1,0 +1,116 @@
+#include "handy_unit.hpp"
+#include "names.hpp"
+#include "text_table.hpp"
+
+#include "carlin/output/output.hpp"
+
+#include <algorithm>
+#include <array>
+#include <cmath>
+#include <fmt/format.h>
+#include <ostream>
+
+namespace carlin
+{
+namespace
+{
+// Worst first: not met by utilisation, then those that cannot be judged, then met by utilisation.
+int rank(const Check& check)
+{
+  constexpr std::array ranks{2, 0, 1}; // met, not met, not judged
+  return ranks[static_cast<std::size_t>(check.verdict)];
+}
+
+bool is_worse(const Check& a, const Check& b)
+{
+  if (rank(a) != rank(b))
+    return rank(a) < rank(b);
+  return a.utilisation.value_or(0.0) > b.utilisation.value_or(0.0);
+}
+
+std::string found_and_limit(const Check& check)
+{
+  const double largest =
+      std::max(std::abs(check.demand), check.limit ? std::abs(*check.limit) : 0.0);
+  const HandyUnit unit = handy_unit(check.unit, largest);
+  std::string text = figures(check.demand * unit.factor);
+  if (check.limit)
+    text += (check.limit_from_below ? " >= " : " <= ") + figures(*check.limit * unit.factor);
+  return unit.name.empty() ? text : text + " " + unit.name;
+}
+
+TextTable table_of(const std::vector<Check>& checks)
+{
+  TextTable table;
+  table.columns = {{"use", Align::right, 0},   {"verdict", Align::left, 0},
+                   {"check", Align::left, 14}, {"found, limit", Align::left, 0},
+                   {"where", Align::left, 20}, {"case, stage", Align::left, 12}};
+  for (const Check& check : checks)
+  {
+    std::string when = check.load_case;
+    if (!check.stage.empty())
+      when += ", " + check.stage;
+    table.rows.push_back({check.utilisation ? fmt::format("{:.2f}", *check.utilisation) : "-",
+                          word_of(check.verdict), check.name, found_and_limit(check), check.subject,
+                          when});
+  }
+  return table;
+}
+
+void print_remarks(std::ostream& out, const std::vector<Check>& checks)
+{
+  std::vector<std::pair<std::string, std::size_t>> remarks;
+  for (const Check& check : checks)
+  {
+    if (check.remark.empty())
+      continue;
+    const auto known =
+        std::ranges::find(remarks, check.remark, &std::pair<std::string, std::size_t>::first);
+    if (known == remarks.end())
+      remarks.emplace_back(check.remark, 1);
+    else
+      ++known->second;
+  }
+  for (const auto& [remark, count] : remarks)
+    print_wrapped(out, fmt::format("- {} ({} check{})", remark, count, count == 1 ? "" : "s"), 2);
+}
+
+std::string counts(const std::vector<Check>& checks)
+{
+  const auto count = [&](Verdict verdict)
+  { return std::ranges::count(checks, verdict, &Check::verdict); };
+  return fmt::format("{} met, {} not met, {} not judged", count(Verdict::met),
+                     count(Verdict::not_met), count(Verdict::not_judged));
+}
+} // namespace
+
+void print_checks(std::ostream& out, const RunResult& result)
+{
+  std::vector<std::string> summary;
+  for (const Standing standing : {Standing::judged, Standing::shown, Standing::base})
+    for (const ConfigurationSolution& configuration : result.configurations)
+    {
+      if (configuration.craft.standing != standing)
+        continue;
+      std::vector<Check> checks;
+      std::ranges::copy_if(result.checks, std::back_inserter(checks),
+                           [&](const Check& check)
+                           { return check.configuration == configuration.craft.name; });
+      std::ranges::stable_sort(checks, is_worse);
+      const std::string standing_text =
+          standing == Standing::judged ? "judged" : "shown, not counted";
+      summary.push_back(
+          fmt::format("{} ({}, {})", counts(checks), configuration.craft.name, standing_text));
+      if (checks.empty())
+        continue;
+      out << fmt::format("checks, {} ({})\n", configuration.craft.name, standing_text);
+      print_table(out, table_of(checks));
+      print_remarks(out, checks);
+      out << '\n';
+    }
+  if (summary.empty())
+    summary.push_back("no checks: no configuration was solved");
+  for (const std::string& line : summary)
+    print_wrapped(out, line, 2);
+}
+} // namespace carlin
