@@ -5,7 +5,6 @@
 #include "carlin/output/output.hpp"
 
 #include <algorithm>
-#include <array>
 #include <cmath>
 #include <fmt/format.h>
 #include <ostream>
@@ -14,20 +13,6 @@ namespace carlin
 {
 namespace
 {
-// Worst first: not met by utilisation, then those that cannot be judged, then met by utilisation.
-int rank(const Check& check)
-{
-  constexpr std::array ranks{2, 0, 1}; // met, not met, not judged
-  return ranks[static_cast<std::size_t>(check.verdict)];
-}
-
-bool is_worse(const Check& a, const Check& b)
-{
-  if (rank(a) != rank(b))
-    return rank(a) < rank(b);
-  return a.utilisation.value_or(0.0) > b.utilisation.value_or(0.0);
-}
-
 std::string found_and_limit(const Check& check)
 {
   const double largest =
