@@ -66,8 +66,9 @@ struct Station : Named
 
 /// Fore-and-aft plane of the lattice, off the centreline, both sides alike. Built in and not to be
 /// declared: `centreline` (y = 0) and `chine` (the side of the hull).
-/// Straight at `offset` (or along `plan`) between stations `from` and `to`; beyond them kept at its
-/// fraction of the chine's half breadth there, so that it stays in the boat where the bow narrows.
+/// Straight along `plan` between stations `from` and `to`; beyond them kept at its fraction of the
+/// half breadth of the chine (at the deck: of the deck edge) there, so that it stays in the boat
+/// where the bow narrows.
 struct Buttock : Named
 {
   std::vector<std::pair<double, double>>
@@ -79,7 +80,8 @@ struct Buttock : Named
 
 /// Named height above base. Built in: `bottom` (the bottom plating) and `deck`.
 /// Level at `profile` from the centreline out to buttock `out_to` and between stations `from` and
-/// `to`; beyond, kept at its fraction of the height between bottom and deck.
+/// `to`; beyond, kept at its fraction of the height between its nearest level neighbours (bottom
+/// and deck, or heights that are still level there).
 struct Height : Named
 {
   std::vector<std::pair<double, double>> profile; ///< (x, z) [m]; one entry: constant z, x unused
@@ -92,7 +94,8 @@ struct Hull
 {
   std::optional<HullOffsets> offsets; ///< exactly one of the two is given
   std::optional<HullDimensions> dimensions;
-  double deck_camber = 0.0;      ///< rise of the deck at the centreline over its edge [m]
+  double deck_camber = 0.0;      ///< rise of the deck at the centreline over its edge where the
+                                 ///< deck is widest; one round of beam for all of it [m]
   std::vector<Station> stations; ///< at least two; first and last close the hull
   std::vector<Buttock> buttocks; ///< from the centreline outward
   std::vector<Height> heights;   ///< from the bottom upward

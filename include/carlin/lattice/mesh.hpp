@@ -32,7 +32,12 @@ struct MeshPart
 };
 
 /// Flat or warped quadrilateral, or triangle (last point -1). Points are ordered so that the
-/// right-hand normal points inward: from the moulded face to the inside of the boat.
+/// right-hand normal points inward: from the moulded face to the inside of the boat. Bottom up,
+/// side inboard, deck down, transom forward, stem face aft. On internal surfaces: heights down, as
+/// the deck; buttocks inboard, on the centreline to starboard; stations forward, as the transom.
+/// Frame plates: by the order of their corners. A starboard cell of the lattice begins at the
+/// mirrored first point of its port twin and goes round the other way. The lattice makes
+/// quadrilaterals only: the bow closes to a narrow stem face, not to triangles.
 struct Cell
 {
   std::array<Index, 4> points{-1, -1, -1, -1};
@@ -40,7 +45,13 @@ struct Cell
   bool is_triangle() const { return points[3] < 0; }
 };
 
-/// Line of points along which a member runs.
+/// Line of points along which a member runs, without a gap: a member cut in two has two runs.
+/// Fore-and-aft runs go forward, upright ones up; transverse ones go to port, over the centreline
+/// in one run, or outward on port and inward on starboard if they do not reach it. `toe` is upright
+/// x forward (or up, or outward) on port and on the centreline, mirrored on starboard: outboard for
+/// a stringer on the bottom, up for one on the side, inboard for one on the deck, aft for frames
+/// and beams that stand inside. So (line, toe, upright) is right-handed on port, left-handed for
+/// fore-and-aft and upright runs on starboard. A frame member's toe is upright x its direction.
 struct Run
 {
   Index part = -1;
@@ -103,6 +114,19 @@ MeshQuality mesh_quality(const Mesh& mesh);
 
 /// The lattice of a model: geometry, no physics. One a model, from the planes of all
 /// configurations.
+///
+/// Hull lines: the points of one name at all offset stations, faired over their own x. A station
+/// plane cuts them; straight lines join the cuts to the section. Bottom points of a column lie on
+/// the section's bottom, deck points on the deck (one round of beam for the whole length: rise at
+/// the centreline deck_camber x (breadth / largest breadth)^2), columns are straight between, the
+/// side column follows the side. Between named stations position and tan(rake) change linearly. A
+/// buttock beyond its straight range keeps its fraction of the chine's half breadth at the bottom
+/// and of the deck edge's at the deck; a height keeps its fraction of the interval between the
+/// nearest heights that are still level (bottom and deck are), measured where it was last level
+/// itself. Intervals between named planes are divided equally along the whole boat: stations by the
+/// longest hull line, columns by the mean breadth over the length (bottom or deck, whichever is
+/// wider), heights by the mean over the length on the column where they are highest; no mean is
+/// longer than the mesh size.
 class Lattice
 {
 public:
@@ -112,11 +136,20 @@ public:
   ///   (names station and buttock), a plane outside the hull, offsets that cannot be lofted.
   Lattice(const Model& model, double mesh_size);
 
-  /// Cells and runs of one configuration (hull lattice and frame alike).
-  /// @throws ModelError for ranges that hold no face or edge.
+  /// Cells and runs of one configuration (hull lattice and frame alike). A part of which the
+  /// configuration leaves nothing is not in the mesh. Frame points that coincide with one another
+  /// or with a point of the lattice (within 1e-9 of the structure's size) are one point.
+  ///
+  /// A member's `inside` or `outside` is the mean normal of the two faces of its surface beside the
+  /// edge; the other directions (up, forward, inboard ...) are those of the boat made square to the
+  /// edge: a bottom stringer that stands `up` has an upright web.
+  /// @throws ModelError with all problems: ranges that hold no face or edge, names that do not
+  ///   exist, two plates on one face, cut-outs that take nothing away from any part, members with
+  ///   no direction to stand in.
   Mesh mesh(const ConfiguredCraft& craft) const;
 
-  /// Points of the lattice by named planes, for `draw`: resolved positions.
+  /// Points of the lattice by named planes, for `draw`: resolved positions. Stations and heights
+  /// are closed outlines of both halves, buttocks of the port half; built-in planes are included.
   struct ResolvedPlane
   {
     std::string kind, name;
