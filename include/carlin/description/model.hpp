@@ -71,6 +71,8 @@ struct Configuration : Named
 struct Criteria
 {
   std::map<std::string, double> limits; ///< by name of the criterion, SI
+  std::map<std::string, std::string>
+      written; ///< the same as written, "120 MPa": whoever knows the dimension can check it
   std::map<std::string, FileLocation> where;
 };
 
@@ -123,6 +125,10 @@ Model read_model_text(const std::string& text, const std::filesystem::path& file
 /// A replaced region becomes a part of its own, named "<part> (<configuration>)".
 /// @throws ModelError for a name that does not exist (read_model has found those already).
 ConfiguredCraft configured(const Model& model, const std::string& configuration);
+
+/// What a model says that is no error but should be read: "tank-1: stated growth of length is a
+/// strain of 2.5 %, more than fibre ultimate over burst ratio 0.93 %: ...". One line each.
+std::vector<std::string> warnings(const Model& model);
 
 /// Reference of the whole file in Markdown, its tables made from the reader's own keys.
 std::string model_reference();

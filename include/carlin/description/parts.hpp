@@ -71,6 +71,8 @@ struct PlatePart : Named
   Patch patch;
   std::string schedule;
   std::vector<CutOut> cut_outs;
+  std::string family; ///< name as written, when a list of planes made several parts of one entry;
+                      ///< also of a region that a configuration has replaced
 };
 
 /// Direction in which a member's profile stands off the line of nodes. `inside` is off the inner
