@@ -32,9 +32,11 @@ double shear_flexibility(const char* name, double stiffness)
 MemberFrame member_frame(const MemberGeometry& geometry)
 {
   const Vector3 along = geometry.node_2 + geometry.offset_2 - geometry.node_1 - geometry.offset_1;
+  const double size = (geometry.node_2 - geometry.node_1).norm() + geometry.offset_1.norm() +
+                      geometry.offset_2.norm();
   MemberFrame frame;
   frame.length = along.norm();
-  if (!(frame.length > 0.0))
+  if (!(frame.length > 1e-9 * size)) // less is round-off of the places
     throw ValueError(fmt::format("the centroids of a member's ends coincide at ({:g}, {:g}, {:g}) "
                                  "m; nodes and offsets must leave a length",
                                  geometry.node_1.x() + geometry.offset_1.x(),
@@ -69,8 +71,8 @@ SectionFlexibility section_flexibility(const MemberSection& section)
   // strain = z r_y' - y r_z': M_y = EI_y r_y' - EI_yz r_z', M_z = EI_z r_z' - EI_yz r_y'.
   flexibility.bending << EI_z, EI_yz, EI_yz, EI_y;
   flexibility.bending /= determinant;
-  flexibility.shear.diagonal() << shear_flexibility("shear_stiffness_y", section.shear_stiffness_y),
-      shear_flexibility("shear_stiffness_z", section.shear_stiffness_z);
+  flexibility.shear(0, 0) = shear_flexibility("shear_stiffness_y", section.shear_stiffness_y);
+  flexibility.shear(1, 1) = shear_flexibility("shear_stiffness_z", section.shear_stiffness_z);
   flexibility.torque << 0.0, section.profile.shear_centre_z, -section.profile.shear_centre_y, 1.0,
       0.0, 0.0;
   return flexibility;

@@ -4,6 +4,14 @@
 
 namespace carlin
 {
+namespace
+{
+bool is_warped(const ShellPlane& plane)
+{
+  return std::abs(plane.height[0]) > 1e-12 * std::sqrt(plane_area(plane));
+}
+} // namespace
+
 Vector24 shell_pressure(const QuadPoints& points, double pressure)
 {
   Vector24 forces = Vector24::Zero();
@@ -69,6 +77,22 @@ Vector24 shell_thermal(const QuadPoints& points, const ShellSection& section,
     forces.segment<6>(6 * i) =
         corner_motion(plane, static_cast<std::size_t>(i)).transpose() * local;
   }
+  if (is_warped(plane))
+    forces += shell_stiffness(points, section, material_axis) *
+              shell_arm_growth(points, section, material_axis, temperature_rise);
   return forces;
+}
+
+Vector24 shell_arm_growth(const QuadPoints& points, const ShellSection& section,
+                          const Vector3& material_axis, double temperature_rise)
+{
+  const ShellPlane plane = shell_plane(points, material_axis);
+  const Vector3 free_strain = section.A.ldlt().solve(section.thermal_force) * temperature_rise;
+  const double growth = 0.5 * (free_strain.x() + free_strain.y());
+  Vector24 motion = Vector24::Zero();
+  for (Index i = 0; i < 4; ++i)
+    motion.segment<3>(6 * i) =
+        growth * plane.height[static_cast<std::size_t>(i)] * plane.axes.col(2);
+  return motion;
 }
 } // namespace carlin

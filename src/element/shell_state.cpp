@@ -30,7 +30,8 @@ ShellState shell_state(const QuadPoints& points, const ShellSection& section,
                        double eta, double temperature_rise)
 {
   const Eigen::Matrix<double, 8, 1> strain =
-      shell_strain_matrix(points, section, material_axis, xi, eta) * displacement;
+      shell_strain_matrix(points, section, material_axis, xi, eta) *
+      (displacement - shell_arm_growth(points, section, material_axis, temperature_rise));
   ShellState state;
   state.membrane = strain.head<3>();
   state.curvature = strain.segment<3>(3);

@@ -39,6 +39,12 @@ Vector24 shell_pressure(const QuadPoints& points, double pressure);
 Vector24 shell_thermal(const QuadPoints& points, const ShellSection& section,
                        const Vector3& material_axis, double temperature_rise);
 
+/// Growth of the arms from the mean plane to the nodes of a warped quad, by the mean free membrane
+/// strain: a hull warmed as a whole stays free of stress. Contained in shell_thermal and
+/// shell_state; take it off the displacements before shell_strain_matrix.
+Vector24 shell_arm_growth(const QuadPoints& points, const ShellSection& section,
+                          const Vector3& material_axis, double temperature_rise);
+
 double shell_area(const QuadPoints& points); ///< of the mean plane's projection [m^2]
 
 /// Local frame: columns are the local x, y, z axes; z the normal by the right hand.
