@@ -5,6 +5,8 @@
 #include <cassert>
 #include <cmath>
 #include <fmt/format.h>
+#include <map>
+#include <set>
 
 namespace carlin
 {
@@ -223,6 +225,29 @@ void add_runs(const Grid& grid, const Line& line, CutOuts& cut_outs, Mesh& mesh)
       maker.add_edge(number, starboard, false);
   }
 }
+/// Two members on one edge are no mistake in general (bars on both sides of a plate); two of one
+/// family are: a region replaced without its original cut out would count twice, unseen.
+void check_families(const Mesh& mesh, std::vector<Problem>& problems)
+{
+  std::map<std::pair<Index, Index>, std::vector<Index>> parts_at;
+  std::set<std::pair<Index, Index>> reported;
+  for (const Run& run : mesh.runs)
+    for (std::size_t i = 0; i + 1 < run.points.size(); ++i)
+    {
+      std::vector<Index>& parts = parts_at[std::minmax(run.points[i], run.points[i + 1])];
+      const MeshPart& here = mesh.parts[static_cast<std::size_t>(run.part)];
+      for (const Index other : parts)
+      {
+        const MeshPart& there = mesh.parts[static_cast<std::size_t>(other)];
+        if (here.family == there.family && reported.insert({other, run.part}).second)
+          problems.push_back(
+              {here.where, fmt::format("members '{}' and '{}' of one family lie on the same edges; "
+                                       "end one where the other begins",
+                                       there.name, here.name)});
+      }
+      parts.push_back(run.part);
+    }
+}
 } // namespace
 
 Vector3 toe_direction(const Vector3& upright, const Vector3& tangent)
@@ -259,5 +284,6 @@ void add_members(const Grid& grid, const std::vector<MemberPart>& members, CutOu
       problems.insert(problems.end(), error.problems().begin(), error.problems().end());
     }
   }
+  check_families(mesh, problems);
 }
 } // namespace carlin

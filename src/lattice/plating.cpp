@@ -45,7 +45,8 @@ bool is_outer_shell(const Grid& grid, Surface surface, Index plane)
 MeshPart part_of(const PlatePart& plate)
 {
   MeshPart part;
-  part.name = part.family = plate.name;
+  part.name = plate.name;
+  part.family = plate.family.empty() ? plate.name : plate.family;
   part.kind = MeshPart::Kind::plate;
   part.plate_kind = plate.kind;
   part.surface = plate.patch.surface;

@@ -154,10 +154,10 @@ public:
       rows.assign(mesh.cells.size(), {});
   }
 
-  /// Fewest cells across the short side of any panel; 0 without cells.
-  int fewest()
+  /// Fewest cells across the short side of any panel, and one of its cells; 0 without cells.
+  std::pair<int, std::size_t> fewest()
   {
-    int result = 0;
+    std::pair<int, std::size_t> result{0, 0};
     for (std::size_t c = 0; c < mesh_.cells.size(); ++c)
     {
       if (mesh_.cells[c].is_triangle())
@@ -167,7 +167,8 @@ public:
           measure(c, axis);
       const Row &first = rows_[0][c], &second = rows_[1][c];
       const int across = first.length <= second.length ? first.cells : second.cells;
-      result = result == 0 ? across : std::min(result, across);
+      if (result.first == 0 || across < result.first)
+        result = {across, c};
     }
     return result;
   }
@@ -245,7 +246,7 @@ private:
 };
 
 /// Fewest segments of a member between points where it is held: its ends, a plate part that it
-/// crosses and does not lie on, a primary member of another part.
+/// crosses and does not lie on, a primary member that it crosses.
 class Spans
 {
 public:
@@ -264,9 +265,15 @@ public:
           add(primaries_[point], run.part);
   }
 
-  int fewest() const
+  /// Number of segments, the part and the point in the middle of the span.
+  struct Fewest
   {
-    int result = 0;
+    int segments = 0;
+    Index part = -1, middle = -1;
+  };
+  Fewest fewest() const
+  {
+    Fewest result;
     for (const Run& run : mesh_.runs)
     {
       int count = 0;
@@ -275,7 +282,8 @@ public:
         ++count;
         if (i + 1 < run.points.size() && !is_held(run, i))
           continue;
-        result = result == 0 ? count : std::min(result, count);
+        if (result.segments == 0 || count < result.segments)
+          result = {count, run.part, run.points[i - static_cast<std::size_t>(count) / 2]};
         count = 0;
       }
     }
@@ -296,28 +304,33 @@ private:
     const auto found = map.find(point);
     return found == map.end() ? nullptr : &found->second;
   }
-  bool has(Index point, Index plate) const
+  /// Whether a part has the point before or after point i of the run too: it runs alongside.
+  static bool is_alongside(const std::unordered_map<Index, Parts>& map, const Run& run,
+                           std::size_t i, Index part)
   {
-    const Parts* parts = find(plates_, point);
-    return parts && std::ranges::find(*parts, plate) != parts->end();
+    for (const Index neighbour : {run.points[i - 1], run.points[i + 1]})
+      if (const Parts* parts = find(map, neighbour))
+        if (std::ranges::find(*parts, part) != parts->end())
+          return true;
+    return false;
   }
 
   bool is_held(const Run& run, std::size_t i) const
   {
     const Index here = run.points[i];
     if (const Parts* primaries = find(primaries_, here))
-      if (std::ranges::any_of(*primaries, [&](Index other) { return other != run.part; }))
-        return true;
-    const Parts* plates = find(plates_, here);
-    return plates && std::ranges::any_of(*plates,
-                                         [&](Index plate)
-                                         {
-                                           const bool same_surface =
-                                               part(plate).surface &&
-                                               part(plate).surface == part(run.part).surface;
-                                           return !same_surface && !has(run.points[i - 1], plate) &&
-                                                  !has(run.points[i + 1], plate);
-                                         });
+      for (const Index other : *primaries)
+        if (other != run.part && !is_alongside(primaries_, run, i, other))
+          return true;
+    if (const Parts* plates = find(plates_, here))
+      for (const Index plate : *plates)
+      {
+        const bool same_surface =
+            part(plate).surface && part(plate).surface == part(run.part).surface;
+        if (!same_surface && !is_alongside(plates_, run, i, plate))
+          return true;
+      }
+    return false;
   }
 
   const Mesh& mesh_;
@@ -333,8 +346,18 @@ MeshQuality mesh_quality(const Mesh& mesh)
   quality.points_used = points_used(mesh);
   add_shapes(mesh, quality);
   const Edges edges = edges_of(mesh);
-  quality.fewest_cells_per_panel = PanelRows(mesh, edges).fewest();
-  quality.fewest_cells_per_span = Spans(mesh).fewest();
+  const auto words = [&](Index part, const Vector3& position)
+  { return mesh.parts[static_cast<std::size_t>(part)].name + ", " + mesh.place(position); };
+  const auto [across, cell] = PanelRows(mesh, edges).fewest();
+  quality.fewest_cells_per_panel = across;
+  if (across > 0)
+    quality.fewest_cells_per_panel_place =
+        words(mesh.cells[cell].part, centre(mesh, mesh.cells[cell]));
+  const Spans::Fewest span = Spans(mesh).fewest();
+  quality.fewest_cells_per_span = span.segments;
+  if (span.segments > 0)
+    quality.fewest_cells_per_span_place =
+        words(span.part, mesh.points[static_cast<std::size_t>(span.middle)]);
   return quality;
 }
 } // namespace carlin

@@ -255,6 +255,20 @@ TEST_CASE("Parts that cannot be placed are all refused in one pass", "[unit][lat
           Contains("'unsided': on the centreline there is no inboard"));
 }
 
+TEST_CASE("Two members of one family on the same edges are refused, bars on both sides are not",
+          "[unit][lattice]")
+{
+  carlin::Model model = bare_box();
+  model.members = {member("beam", Surface::deck, Surface::buttock, "girder"),
+                   member("rail", Surface::deck, Surface::buttock, "girder")};
+  model.members[1].stands = Stands::outside;
+  CHECK_NOTHROW(mesh_of(model));
+  model.members[0].family = model.members[1].family = "beams";
+  model.members[1].along = {"middle", ""};
+  CHECK_THROWS_WITH(mesh_of(model), Contains("members 'beam' and 'rail' of one family lie on the "
+                                             "same edges"));
+}
+
 TEST_CASE("A cut-out that takes nothing away is refused", "[unit][lattice]")
 {
   carlin::Model model = bare_box();

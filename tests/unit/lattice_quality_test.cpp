@@ -69,8 +69,23 @@ TEST_CASE("Cells are counted across the short side of panels and along spans of 
   model.members.back().is_primary = true;
   const MeshQuality with_frame = carlin::mesh_quality(mesh_of(model));
   CHECK(with_frame.fewest_cells_per_span == 5);
+  CHECK_THAT(with_frame.fewest_cells_per_span_place,
+             Contains("stringer, x 0.") && Contains("between transom and frame"));
+  CHECK_THAT(with_frame.fewest_cells_per_panel_place,
+             Contains("bottom, x 0.") && Contains("between transom and frame"));
   CHECK(with_frame.fewest_cells_per_panel == 5);
   CHECK(with_frame.cells == 2 * (3 * 40 * 10 + 3 * 10 * 10));
+}
+
+TEST_CASE("A primary member alongside does not hold another up", "[unit][lattice]")
+{
+  carlin::Model model = prism();
+  model.hull->buttocks = {buttock("stringer", 0.4)};
+  model.members = {member("stringer", Surface::deck, Surface::buttock, "stringer"),
+                   member("carling", Surface::deck, Surface::buttock, "stringer")};
+  model.members[1].is_primary = true;
+  model.members[1].along = {"middle", ""};
+  CHECK(carlin::mesh_quality(mesh_of(model)).fewest_cells_per_span == 20); // the carling's own
 }
 
 TEST_CASE("The bottom's own seams do not hold a stringer up", "[unit][lattice]")

@@ -106,9 +106,14 @@ struct MeshQuality
   double largest_warp = 0.0; ///< distance of a corner from the mean plane over mean side [-]
   std::string largest_warp_place;
   double mean_side = 0.0; ///< [m]
-  int fewest_cells_per_panel =
-      0; ///< across the short side of a panel between members or other plates
-  int fewest_cells_per_span = 0; ///< of a member between crossing plates or primary members
+  /// Across the short side of a panel: cells of one plate part up to its edge, a member or another
+  /// part.
+  int fewest_cells_per_panel = 0;
+  std::string fewest_cells_per_panel_place;
+  /// Of a member between its ends, plates that it crosses (not those of the surface it lies on) and
+  /// primary members that it crosses.
+  int fewest_cells_per_span = 0;
+  std::string fewest_cells_per_span_place;
 };
 MeshQuality mesh_quality(const Mesh& mesh);
 
