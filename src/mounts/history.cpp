@@ -307,7 +307,8 @@ void require_tank(const Tank& tank)
   for (const Collar& collar : tank.collars)
   {
     const std::string at = of + "collar " + collar.name + ": ";
-    if (!(collar.position >= 0.0 && collar.position <= length))
+    // ends included, to the round-off of their distance
+    if (!(collar.position >= 0.0 && collar.position <= length * (1.0 + 1e-12)))
       throw ValueError(fmt::format("{}position is {:g} m; the tank is {:g} m long", at,
                                    collar.position, length));
     if (collar.feet.empty())

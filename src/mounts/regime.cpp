@@ -320,8 +320,10 @@ VectorX event_excess(const Stage& stage, const Position& start, const VectorX& x
 {
   const Model& model = stage.model;
   const LoadState now = stage.at(t);
-  VectorX excess = VectorX::Constant(3 * static_cast<Index>(model.slides.size()),
-                                     -std::numeric_limits<double>::infinity());
+  // one entry at least, so that a model without slides has a largest
+  VectorX excess =
+      VectorX::Constant(std::max<Index>(1, 3 * static_cast<Index>(model.slides.size())),
+                        -std::numeric_limits<double>::infinity());
   for (std::size_t i = 0; i < model.slides.size(); ++i)
   {
     const Slide& slide = model.slides[i];
