@@ -288,3 +288,58 @@ TEST_CASE("Halving the mesh size keeps the named planes and converges in area an
   CHECK(std::abs(volumes[2] - volumes[1]) < std::abs(volumes[1] - volumes[0]) / 3.0);
   CHECK_THAT(volumes[2], WithinRel(volumes[1], 1e-3));
 }
+
+TEST_CASE("Buttocks along a plan and heights along a profile are met on raked stations too",
+          "[unit][lattice]")
+{
+  carlin::Model model = prism(0.35, 1.2);
+  model.hull->stations = {station("transom", 0.2, -0.2), station("bow", 3.5, 0.4)};
+  model.hull->buttocks = {buttock("girder", 0.0), buttock("hatch", 0.7)};
+  model.hull->buttocks[0].plan = {{0.0, 0.5}, {2.0, 0.5}, {4.0, 0.3}};
+  model.hull->buttocks[1].deck_offset = 0.9;
+  model.hull->heights = {height("sole", 0.0)};
+  model.hull->heights[0].profile = {{0.0, 0.6}, {4.0, 0.8}};
+  const carlin::Lattice lattice(model, 0.1);
+  int checked = 0;
+  for (const carlin::Lattice::ResolvedPlane& plane : lattice.resolved_planes())
+    for (const Vector3& p : plane.line)
+    {
+      ++checked;
+      if (plane.name == "girder")
+        REQUIRE_THAT(p.y(), WithinAbs(p.x() <= 2.0 ? 0.5 : 0.5 - 0.1 * (p.x() - 2.0), round_off));
+      if (plane.name == "hatch") // leans from 0.7 at the bottom to 0.9 at the deck
+        REQUIRE_THAT(p.y(), WithinAbs(p.z() < 0.5 ? 0.7 : 0.9, round_off));
+      if (plane.name == "sole")
+        REQUIRE_THAT(p.z(), WithinAbs(0.6 + 0.05 * p.x(), round_off));
+      if (plane.name == "bow")
+        REQUIRE_THAT(p.x(), WithinAbs(3.5 + std::tan(0.4) * p.z(), round_off));
+    }
+  CHECK(checked > 200);
+}
+
+TEST_CASE("A height keeps its fraction between its level neighbours beyond its range",
+          "[unit][lattice]")
+{
+  // Box 1 m deep. 'flat' level at 0.4 out to the girder and back to the middle; 'sole' level at 0.8
+  // all along: beyond, the flat stays at half of the height up to the sole, in a hull that gets
+  // shallower: at the bow the sole is level at 0.8 above a bottom at 0.2, so the flat is at 0.5.
+  carlin::Model model = prism();
+  model.hull->offsets->fairing = carlin::Fairing::straight;
+  model.hull->offsets->stations[1].points[0].position.z() = 0.2;
+  model.hull->offsets->stations[1].points[1].position.z() = 0.2;
+  model.hull->offsets->stations.insert(
+      model.hull->offsets->stations.begin() + 1,
+      offset_station({"keel", "chine", "deck-edge"}, {{2, 0, 0}, {2, 1, 0}, {2, 1, 1}}));
+  model.hull->buttocks = {buttock("girder", 0.5)};
+  model.hull->heights = {height("flat", 0.4), height("sole", 0.8)};
+  model.hull->heights[0].out_to = "girder";
+  model.hull->heights[0].to = "middle";
+  const carlin::Lattice lattice(model, 0.1);
+  for (const carlin::Lattice::ResolvedPlane& plane : lattice.resolved_planes())
+    if (plane.name == "flat")
+      for (const Vector3& p : plane.line)
+      {
+        const double bottom = std::max(0.0, 0.1 * (p.x() - 2.0));
+        REQUIRE_THAT(p.z(), WithinAbs(bottom + 0.5 * (0.8 - bottom), round_off));
+      }
+}
