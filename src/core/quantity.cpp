@@ -26,7 +26,7 @@ struct DimensionFacts
 };
 
 constexpr std::array<DimensionFacts, 29> facts = {{
-    {"-", "1", "a number without unit", "0.3 or 8 %"},
+    {"-", "1", "a number without unit", "0.3"},
     {"m", "m", "a length", "6 mm"},
     {"m^2", "m2", "an area", "1200 mm2"},
     {"m^4", "m4", "a second moment of area", "2.5e6 mm4"},

@@ -178,7 +178,9 @@ std::string nearest_name(std::string_view name, const std::vector<std::string>& 
   constexpr std::size_t longest_compared = 80; // cost grows with the square
   const std::string wanted = letters(name.substr(0, longest_compared));
   std::string best;
-  std::size_t best_distance = std::max<std::size_t>(1, wanted.size() / 3) + 1;
+  // A third of the letters may differ; of one or two letters none.
+  std::size_t best_distance =
+      wanted.size() < 3 ? 1 : std::max<std::size_t>(1, wanted.size() / 3) + 1;
   for (const std::string& candidate : known)
   {
     const std::size_t distance =

@@ -166,13 +166,12 @@ std::vector<Entry> named_entries(const Node& node)
   }
   for (const Entry& entry : node.entries())
   {
-    if (is_usable_name(entry.name))
-      usable.push_back(entry);
-    else
+    if (!is_usable_name(entry.name))
       entry.node.complain_at_key(
           fmt::format("'{}' cannot be a name; use letters, digits, spaces and - _ . + ( ), at most "
                       "60 of them",
                       entry.name));
+    usable.push_back(entry); // even so: what refers to it need not be complained of as well
   }
   return usable;
 }
