@@ -200,7 +200,10 @@ std::string listed(const std::vector<std::string>& names)
   const std::size_t shown = names.size() > most + 1 ? most : names.size();
   std::string text;
   for (std::size_t i = 0; i < shown; ++i)
-    text += (i == 0 ? "" : ", ") + names[i];
+  {
+    const bool has_comma = names[i].find(',') != std::string::npos;
+    text += fmt::format("{0}{1}{2}{1}", i == 0 ? "" : ", ", has_comma ? "'" : "", names[i]);
+  }
   if (shown < names.size())
     text += fmt::format(" and {} more", names.size() - shown);
   return text;

@@ -15,7 +15,9 @@ const Section material_section = {
         quantity("youngs_modulus", Dimension::pressure, Bound::positive, ""),
         quantity("poissons_ratio", Dimension::none, Bound::any, "between -1 and 0.5"),
         quantity("density", Dimension::density, Bound::not_negative, ""),
-        quantity("thermal_expansion", Dimension::thermal_expansion, Bound::any, "along any line"),
+        quantity("thermal_expansion", Dimension::thermal_expansion, Bound::any,
+                 "along any line; needed where a case sets a temperature of the hull")
+            .optional("0 1/K"),
         quantity("yield_strength", Dimension::pressure, Bound::positive,
                  "0.2 % proof, parent metal")
             .optional("stress is not judged"),

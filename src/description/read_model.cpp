@@ -1,6 +1,7 @@
 #include "fields.hpp"
 #include "readers.hpp"
 
+#include <algorithm>
 #include <fmt/format.h>
 #include <fstream>
 #include <sstream>
@@ -102,6 +103,26 @@ void check_top_level(const Fields& fields)
     fields.node("bed").complain_at_key("nothing stands on the bed; add 'tanks:'");
 }
 
+/// A material that says nothing of expansion would silently stay cold.
+void check_expansions(const Node& materials, const Model& model)
+{
+  bool is_heated = false;
+  for (const LoadCase& load_case : model.cases)
+    for (const Stage& stage : load_case.stages)
+      is_heated = is_heated || !stage.hull_temperatures.empty();
+  if (!is_heated)
+    return;
+  for (const Entry& material : materials.entries())
+  {
+    const std::vector<Entry> keys = material.node.entries();
+    if (std::none_of(keys.begin(), keys.end(),
+                     [](const Entry& key) { return key.name == "thermal_expansion"; }))
+      material.node.complain_at_key("key 'thermal_expansion' is missing, and a case sets a "
+                                    "temperature of the hull; add 'thermal_expansion: 23.8e-6 "
+                                    "1/K'");
+  }
+}
+
 Model read_document(const Node& document, const std::filesystem::path& file)
 {
   Model model;
@@ -125,6 +146,7 @@ Model read_document(const Node& document, const std::filesystem::path& file)
   model.tanks = read_tanks(fields.node("tanks"), fields.has("bed"));
   model.configurations = read_configurations(fields.node("configurations"), model, planes);
   model.cases = read_cases(fields.node("cases"));
+  check_expansions(fields.node("materials"), model);
   model.criteria = read_criteria(fields.node("criteria"));
   read_stiffness(fields.node("stiffness"), model);
   return model;

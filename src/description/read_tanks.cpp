@@ -265,9 +265,10 @@ void check_collar(const Fields& fields, const Collar& collar, const Tank& tank)
   if (!fields.has("friction"))
     fields.map().complain_at_key("key 'friction' is missing; a sliding collar has a coefficient, "
                                  "e.g. 'friction: [0.08, 0.25]', or 'friction: 0'");
-  if (collar.slides_at == SlidesAt::lining && !collar.ring)
+  // Without a ring nothing clamps: only a frictionless slide makes sense then.
+  if (collar.slides_at == SlidesAt::lining && !collar.ring && collar.friction.high > 0.0)
     fields.map().complain_at_key(
-        "it slides at the lining but has no ring; add 'ring: {...}' or say "
+        "it slides at the lining with friction but has no ring; add 'ring: {...}' or say "
         "'slides_at: foot' or 'slides_at: neck'");
   if (collar.slides_at != SlidesAt::foot)
     refuse_keys(fields, {"foot_bolt_preload"}, "a collar that slides at the foot");

@@ -173,7 +173,7 @@ std::string model_reference()
       "an "
       "acceleration is due, and gram where a mass is due. `kn` is refused: write `knot` or `kN`.\n"
       "- Named things are maps `name: {...}`; their order in the file is kept. Names have letters, "
-      "digits, spaces and `- _ . + ( )`.\n"
+      "digits, spaces and `- _ . , + ( )`.\n"
       "- Problems are listed all at once as `file:line:column: error: path: what is wrong; what to "
       "do`; elements of lists are counted from 1 in the path.\n\n"
       "The examples of the chapters from *Craft and mesh* to *Criteria and stiffness* make one "

@@ -148,7 +148,7 @@ bool is_usable_name(const std::string& name)
                      [](unsigned char c)
                      {
                        return c >= 0x80 || std::isalnum(c) != 0 || c == ' ' || c == '-' ||
-                              c == '_' || c == '.' || c == '+' || c == '(' || c == ')';
+                              c == '_' || c == '.' || c == ',' || c == '+' || c == '(' || c == ')';
                      }) &&
          name.find_first_not_of('.') != std::string::npos;
 }
@@ -167,10 +167,10 @@ std::vector<Entry> named_entries(const Node& node)
   for (const Entry& entry : node.entries())
   {
     if (!is_usable_name(entry.name))
-      entry.node.complain_at_key(
-          fmt::format("'{}' cannot be a name; use letters, digits, spaces and - _ . + ( ), at most "
-                      "60 of them",
-                      entry.name));
+      entry.node.complain_at_key(fmt::format(
+          "'{}' cannot be a name; use letters, digits, spaces and - _ . , + ( ), at most "
+          "60 of them",
+          entry.name));
     usable.push_back(entry); // even so: what refers to it need not be complained of as well
   }
   return usable;
