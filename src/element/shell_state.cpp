@@ -40,7 +40,7 @@ ShellState shell_state(const QuadPoints& points, const ShellSection& section,
                 section.thermal_force * temperature_rise;
   state.moment = section.B.transpose() * state.membrane + section.D * state.curvature -
                  section.thermal_moment * temperature_rise;
-  state.shear_force = section.shear * state.shear;
+  state.shear_force = element_shear(shell_plane(points, material_axis), section) * state.shear;
   return state;
 }
 } // namespace carlin

@@ -1,5 +1,7 @@
 #include "shell_strain.hpp"
 
+#include <algorithm>
+
 namespace carlin
 {
 namespace
@@ -129,6 +131,21 @@ ShellStrain shell_strain(const ShellPlane& plane, const ShellShape& centre, cons
   return strain;
 }
 
+Matrix2 element_shear(const ShellPlane& plane, const ShellSection& section)
+{
+  if (!plane.is_triangle)
+    return section.shear;
+  double longest = 0.0; // squared
+  for (Index i = 0; i < 3; ++i)
+    longest =
+        std::max(longest, (plane.corners.col((i + 1) % 3) - plane.corners.col(i)).squaredNorm());
+  // The bending stiffness about the neutral plane stands for the thickness, so that sandwich
+  // panels fit in: D / (kappa G t) = t^2 / (6 (1 - nu) kappa), 3.5 at nu = 0.3.
+  const Matrix3 bending = section.D - section.B.transpose() * section.A.ldlt().solve(section.B);
+  const double thickness = 3.5 * (bending(0, 0) + bending(1, 1)) / section.shear.trace(); // squared
+  return thickness / (thickness + 0.1 * longest) * section.shear;
+}
+
 ShellBlocks shell_blocks(const ShellPlane& plane, const ShellSection& section)
 {
   ShellBlocks blocks;
@@ -144,6 +161,7 @@ ShellBlocks shell_blocks(const ShellPlane& plane, const ShellSection& section)
   const bool is_coupled = !section.B.isZero(0.0);
   const ShellShape centre = shell_shape(plane, 0.0, 0.0);
   const SideShear sides = side_shear(plane);
+  const Matrix2 shear = element_shear(plane, section);
   ModeSums sums;
   const ShellPoints points = shell_points(plane);
   for (std::size_t p = 0; p < points.count; ++p)
@@ -155,7 +173,7 @@ ShellBlocks shell_blocks(const ShellPlane& plane, const ShellSection& section)
     const Matrix38 moment = (area * section.D) * strain.curvature;
     blocks.membrane.noalias() += strain.membrane.transpose() * force;
     blocks.bending.noalias() += strain.curvature.transpose() * moment;
-    const Matrix212 shear_force = (area * section.shear) * strain.shear;
+    const Matrix212 shear_force = (area * shear) * strain.shear;
     blocks.shear.noalias() += strain.shear.transpose() * shear_force;
     sums.own.noalias() +=
         strain.incompatible.transpose() * ((area * section.A) * strain.incompatible);

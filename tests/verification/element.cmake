@@ -9,7 +9,7 @@ foreach(library carlin_element_model carlin_verification_record)
   target_include_directories(${library} PUBLIC ${CMAKE_CURRENT_SOURCE_DIR}/support)
 endforeach()
 
-foreach(subject beams patches plates shells folded stress)
+foreach(subject beams patches plates shells folded stress frames)
   carlin_add_test(element_${subject}_test
     SOURCES ${CMAKE_CURRENT_SOURCE_DIR}/verification/${subject}_test.cpp
     LIBRARIES carlin_element_model carlin_verification_record LABELS verification)

@@ -196,12 +196,13 @@ TEST_CASE("Membrane and bending patches hold together anywhere in space", "[veri
                  });
 }
 
-TEST_CASE("Constant transverse shear passes through distorted cells", "[verification][patch]")
+TEST_CASE("Constant transverse shear passes through distorted quads", "[verification][patch]")
 {
   // C1.4: w = 1e-3 x, rotations zero: Q_x = kappa G t gamma = (5/6) 4e5 1e-3 1e-3 = 1/3, no
   // moments. (The verification book prints this same product as 3.33333e-4: a slip of 1000.)
-  const Cells cells = GENERATE(Cells::quads, Cells::triangles);
-  ElementModel model = patch(plate(1e6, 0.25, 0.001), cells);
+  // Triangles are left out: their shear stiffness is lowered by their own size, so that they do not
+  // contain it.
+  ElementModel model = patch(plate(1e6, 0.25, 0.001), Cells::quads);
   for (Index node = 0; node < 8; ++node)
     model.fix(node, "uvabc");
   for (Index node = 0; node < 4; ++node)

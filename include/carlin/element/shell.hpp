@@ -17,8 +17,9 @@ using QuadPoints = std::array<Vector3, 4>;
 /// section's material x axis is `material_axis` projected on the mean plane.
 ///
 /// A triangle repeats its third point as the fourth: constant-strain membrane and curvature,
-/// three-node assumed shear (Lee & Bathe 2004), the same drilling tie. All 24 rows remain; those
-/// of the fourth node are zero. Natural coordinates are those of the collapsed quad.
+/// three-node assumed shear (Lee & Bathe 2004) with a shear stiffness lowered by t^2 / (t^2 + 0.1
+/// h^2) against locking (Lyly, Stenberg & Vihinen 1993), the same drilling tie. All 24 rows remain;
+/// those of the fourth node are zero. Natural coordinates are those of the collapsed quad.
 ///
 /// All functions throw ValueError if the points enclose no area, if a corner is re-entrant, or if
 /// the material axis is normal to the mean plane.
