@@ -1,5 +1,6 @@
 #include "beam.hpp"
 
+#include <algorithm>
 #include <array>
 #include <cmath>
 
@@ -45,7 +46,7 @@ BeamLoad make_beam_load(const Beam& beam, const TankStageLoad& load)
   result.start = mass_per_length * (to_local * at_origin);
   result.slope = mass_per_length * (to_local * rate);
   for (const auto& [position, force] : load.forces)
-    result.forces.emplace_back(position, to_local * force);
+    result.forces.emplace_back(std::clamp(position, 0.0, beam.length), to_local * force);
   result.axial_strain = load.axial_strain;
   return result;
 }

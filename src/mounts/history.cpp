@@ -20,6 +20,13 @@ std::string slide_name(const Model& model, std::size_t i)
                      model.collar_names[static_cast<std::size_t>(slide.collar)]);
 }
 
+/// Friction whose sense turns while it slips: its steps depend on their own length.
+bool is_turning(const Slide& slide, const Status& status, const VectorX& x)
+{
+  return slide.has_turn && status.motion == Motion::slip &&
+         std::abs(x(slide.first + 3)) > 1e-9 * std::abs(x(slide.first));
+}
+
 /// Whether the response is not linear in the stage parameter near x: a ring in partial contact, a
 /// limit on the size of a two-way force, friction that turns.
 bool is_curved(const Stage& stage, const Regime& regime, const VectorX& x, double t)
@@ -35,8 +42,7 @@ bool is_curved(const Stage& stage, const Regime& regime, const VectorX& x, doubl
     const Slide& slide = model.slides[i];
     if (slide.kind == LimitKind::transverse && regime[i].motion != Motion::free)
       return true;
-    if (slide.has_turn && regime[i].motion == Motion::slip &&
-        std::abs(x(slide.first + 3)) > 1e-9 * std::abs(x(slide.first)))
+    if (is_turning(slide, regime[i], x))
       return true;
   }
   return false;
@@ -82,7 +88,8 @@ private:
 
 void StageRun::give_up(const std::string& why) const
 {
-  std::string where = stage_.model.tank_names.front();
+  std::string where =
+      stage_.model.slides.empty() ? stage_.model.tank_names.front() : slide_name(stage_.model, 0);
   for (std::size_t i = 0; i < stage_.model.slides.size(); ++i)
     if (position_.regime[i].motion == Motion::slip)
       where = slide_name(stage_.model, i);
@@ -117,7 +124,7 @@ bool StageRun::turns_too_far(const VectorX& x) const
     const Vector2 from = friction_of(slide, position_.x);
     const Vector2 to = friction_of(slide, x);
     const double cross = from.x() * to.y() - from.y() * to.x();
-    if (std::abs(cross) > 0.01 * from.norm() * to.norm())
+    if (std::abs(cross) > 0.02 * from.norm() * to.norm())
       return true;
   }
   return false;
@@ -126,6 +133,7 @@ bool StageRun::turns_too_far(const VectorX& x) const
 StageRun::Reached StageRun::advance()
 {
   constexpr double curved_step = 0.125;
+  constexpr double shortest_turning_step = 1.0 / 256.0;
   constexpr double shortest_step = 1e-9;
   double step = 1.0 - t_;
   is_curved_ = is_curved(stage_, position_.regime, position_.x, t_);
@@ -144,7 +152,7 @@ StageRun::Reached StageRun::advance()
       step = curved_step;
       continue;
     }
-    if (x && (step < 1e-5 || !turns_too_far(*x)))
+    if (x && (step <= shortest_turning_step || !turns_too_far(*x)))
       return {t, *x, false};
     step *= 0.5;
   }
@@ -155,6 +163,7 @@ StageRun::Reached StageRun::advance()
 StageRun::Reached StageRun::locate(Reached passed)
 {
   constexpr double shortest = 1e-13;
+  constexpr double jump = 1e-7;
   constexpr int iteration_limit = 100;
   double low = t_;
   VectorX excess_low = excess_at_start_ - excess_at_start_.cwiseMax(0.0);
@@ -171,9 +180,18 @@ StageRun::Reached StageRun::locate(Reached passed)
     // One-sided false position creeps on curved functions; halving now and then ends that.
     if (i % 3 == 2)
       share = 0.5;
-    const double t = low + share * (passed.t - low);
-    const std::optional<VectorX> x =
-        solve_at(stage_, position_.regime, position_.x, t, x_low + share * (passed.x - x_low));
+    double t = 0.0;
+    std::optional<VectorX> x;
+    for (int halving = 0; halving < 20 && !x; ++halving, share *= x ? 1.0 : 0.5)
+    {
+      t = low + share * (passed.t - low);
+      x = solve_at(stage_, position_.regime, position_.x, t, x_low + share * (passed.x - x_low));
+      if (!x)
+        x = solve_at(stage_, position_.regime, position_.x, t, x_low);
+    }
+    // Across a gap the tank jumps in no time and has no place between: the far side is the event.
+    if (!x && passed.t - low < jump)
+      break;
     if (!x)
       give_up("Newton's method finds no balance while an event is located");
     const VectorX here = excess(*x, t);
@@ -207,13 +225,17 @@ double StageRun::trapezoid(const VectorX& from, const VectorX& to) const
   return work;
 }
 
-/// Work lost on the way; halved until it is known to 1e-9 where the response is curved.
+/// Work lost on the way; halved until it is known to 1e-9 where the response is curved. Turning
+/// friction follows its own short steps instead: a middle would not lie on their path.
 double StageRun::work_between(const VectorX& from, double t_from, const VectorX& to, double t_to,
                               int depth)
 {
-  constexpr int deepest = 12;
+  constexpr int deepest = 8;
   const double whole = trapezoid(from, to);
-  if (!is_curved_ || depth == deepest || whole == 0.0)
+  bool turns = false;
+  for (std::size_t i = 0; i < stage_.model.slides.size(); ++i)
+    turns = turns || is_turning(stage_.model.slides[i], position_.regime[i], to);
+  if (!is_curved_ || turns || depth == deepest || whole == 0.0)
     return whole;
   const double t = 0.5 * (t_from + t_to);
   const std::optional<VectorX> middle =
@@ -246,6 +268,8 @@ void StageRun::commit(const Reached& reached)
 std::string StageRun::run()
 {
   constexpr int standstill_limit = 60;
+  constexpr int step_limit = 200;
+  int steps = 0;
   Arrival arrival = Arrival::stage_start;
   int standstill = 0;
   while (t_ < 1.0)
@@ -265,7 +289,7 @@ std::string StageRun::run()
     commit(reached);
     arrival = reached.is_event ? Arrival::event : Arrival::stage_start;
     standstill = t_ - before < 1e-12 ? standstill + 1 : 0;
-    if (standstill > standstill_limit)
+    if (standstill > standstill_limit || ++steps > step_limit)
       give_up("sticking and slipping take turns without end");
   }
   return {};

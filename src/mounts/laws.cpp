@@ -131,6 +131,20 @@ void add_slip_rows(const Slide& slide, const Status& status, const Limit& limit,
   }
 }
 
+/// Pressing of a foot by x.
+VectorX press_gradient(const Model& model, const Slide& slide)
+{
+  const Index upright = 6 * slide.foot + 2;
+  VectorX press = VectorX::Zero(model.size);
+  press.head(6 * model.collar_count) =
+      slide.press_sign * model.seats.foot_by_force.row(upright).transpose();
+  Index column = 0;
+  for (const Slide& moving : model.slides)
+    if (moving.foot >= 0)
+      press(moving.first + 1) = slide.press_sign * model.seats.foot_by_slip(upright, column++);
+  return press;
+}
+
 void add_free_rows(const Slide& slide, const VectorX& x, Equations& equations)
 {
   for (const Index i : {slide.first, slide.first + 3})
@@ -199,15 +213,7 @@ Limit slide_limit(const Model& model, Index index, const Status& status, const L
     limit.gradient.segment<2>(across) = slide.coefficient * direction;
     return limit;
   }
-  // foot: pressing = sign * upright force on the hull
-  const Index upright = 6 * slide.foot + 2;
-  VectorX press = VectorX::Zero(model.size);
-  press.head(6 * model.collar_count) =
-      slide.press_sign * model.seats.foot_by_force.row(upright).transpose();
-  Index column = 0;
-  for (const Slide& moving : model.slides)
-    if (moving.foot >= 0)
-      press(moving.first + 1) = slide.press_sign * model.seats.foot_by_slip(upright, column++);
+  const VectorX press = press_gradient(model, slide);
   const double value = press.dot(x) + now.press(index);
   const double press_rate = rate.press(index);
   const bool is_pressed = value > 0.0 || (value == 0.0 && status.transverse.x() > 0.0);
@@ -218,6 +224,20 @@ Limit slide_limit(const Model& model, Index index, const Status& status, const L
     limit.rate = slide.coefficient * press_rate;
   }
   return limit;
+}
+
+double contact_margin(const Model& model, Index index, const LoadState& now, const VectorX& x)
+{
+  const Slide& slide = model.slides[static_cast<std::size_t>(index)];
+  if (slide.kind == LimitKind::ring)
+  {
+    const Index r = model.ring_of_collar[static_cast<std::size_t>(slide.collar)];
+    return model.rings[static_cast<std::size_t>(r)].stiffness *
+           (now.interference(r) + ring_state(model, r, now, x).distance);
+  }
+  if (slide.kind == LimitKind::foot && slide.constant == 0.0)
+    return press_gradient(model, slide).dot(x) + now.press(index);
+  return std::numeric_limits<double>::infinity();
 }
 
 void assemble(const Model& model, const Regime& regime, const VectorX& start, const LoadState& now,

@@ -10,7 +10,7 @@ enum class Motion
 {
   stick,
   slip,
-  free ///< no friction at all
+  free ///< no friction: none given, or no contact
 };
 enum class Contact
 {
@@ -48,6 +48,10 @@ struct RingState
   RingResponse response;            ///< per r w k = 1
 };
 RingState ring_state(const Model& model, Index ring, const LoadState& now, const VectorX& x);
+
+/// Contact of a slide in newtons; negative: a ring in its gap, a foot lifted, nothing to rub on.
+/// Infinite where friction does not need contact.
+double contact_margin(const Model& model, Index slide, const LoadState& now, const VectorX& x);
 
 /// Friction of a slide and its slip: (along, turning).
 Vector2 friction_of(const Slide& slide, const VectorX& x);

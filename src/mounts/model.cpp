@@ -97,7 +97,7 @@ void list_parts(Model& model, const std::vector<Tank>& tanks, RangeEnd end)
     {
       const CollarPlace place{model.tank_count, model.collar_count, foot};
       model.tank_of_collar.push_back(model.tank_count);
-      model.position_of_collar.push_back(collar.position);
+      model.position_of_collar.push_back(std::min(collar.position, model.beams.back().length));
       model.collar_names.push_back(collar.name);
       model.ring_of_collar.push_back(collar.ring ? static_cast<Index>(model.rings.size()) : -1);
       if (collar.ring)

@@ -74,8 +74,14 @@ void Choice::find_candidates()
     const double force = friction_of(slide, position_.x).norm();
     if (slide.is_frictionless() && slide.constant == 0.0)
       status.motion = Motion::free;
+    else if (status.motion != Motion::stick && arrival_ == Arrival::event &&
+             contact_margin(stage_.model, static_cast<Index>(i), stage_.at(t_), position_.x) <
+                 -decided * scale_)
+      status.motion = Motion::free;
     else if (force >= limit(i).value - decided * scale_)
     {
+      if (status.motion == Motion::free)
+        status.motion = Motion::stick;
       candidates_.push_back({i, false, Contact::open});
       if (status.motion == Motion::stick && arrival_ == Arrival::event)
         set(candidates_.back(), true);
@@ -342,6 +348,8 @@ VectorX event_excess(const Stage& stage, const Position& start, const VectorX& x
       if (rate.size() > 0)
         excess(k) = std::max(excess(k), -stiffness_scale * sense.dot(slip_of(slide, rate)));
     }
+    else if (!slide.is_frictionless())
+      excess(k) = contact_margin(model, static_cast<Index>(i), now, x);
     const double slip = x(slide.first + 1);
     const double force = x(slide.first + 2);
     if (status.stop == Contact::open)
