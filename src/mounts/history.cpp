@@ -74,6 +74,7 @@ private:
   double work_between(const VectorX& from, double t_from, const VectorX& to, double t_to,
                       int depth);
   double trapezoid(const VectorX& from, const VectorX& to) const;
+  void note_slips(const VectorX& from, const VectorX& to);
   void commit(const Reached& reached);
   [[noreturn]] void give_up(const std::string& why) const;
 
@@ -186,8 +187,9 @@ StageRun::Reached StageRun::locate(Reached passed)
     {
       t = low + share * (passed.t - low);
       x = solve_at(stage_, position_.regime, position_.x, t, x_low + share * (passed.x - x_low));
-      if (!x)
-        x = solve_at(stage_, position_.regime, position_.x, t, x_low);
+      for (const VectorX& guess : {passed.x, x_low})
+        if (!x)
+          x = solve_at(stage_, position_.regime, position_.x, t, guess);
     }
     // Across a gap the tank jumps in no time and has no place between: the far side is the event.
     if (!x && passed.t - low < jump)
@@ -238,8 +240,10 @@ double StageRun::work_between(const VectorX& from, double t_from, const VectorX&
   if (!is_curved_ || turns || depth == deepest || whole == 0.0)
     return whole;
   const double t = 0.5 * (t_from + t_to);
-  const std::optional<VectorX> middle =
-      solve_at(stage_, position_.regime, position_.x, t, 0.5 * (from + to));
+  std::optional<VectorX> middle;
+  for (const VectorX& guess : {VectorX(0.5 * (from + to)), to, from})
+    if (!middle)
+      middle = solve_at(stage_, position_.regime, position_.x, t, guess);
   if (!middle)
     give_up("Newton's method finds no balance while the work lost is integrated");
   const double halves = trapezoid(from, *middle) + trapezoid(*middle, to);
@@ -249,17 +253,22 @@ double StageRun::work_between(const VectorX& from, double t_from, const VectorX&
          work_between(*middle, t, to, t_to, depth + 1);
 }
 
-void StageRun::commit(const Reached& reached)
+void StageRun::note_slips(const VectorX& from, const VectorX& to)
 {
-  counters_.work_lost += work_between(position_.x, t_, reached.x, reached.t, 0);
   const double noise = 1e-9 * tolerance_ / event_decided / 1e8;
   for (std::size_t i = 0; i < stage_.model.slides.size(); ++i)
   {
     const Slide& slide = stage_.model.slides[i];
-    const double moved = (slip_of(slide, reached.x) - slip_of(slide, position_.x)).norm();
+    const double moved = (slip_of(slide, to) - slip_of(slide, from)).norm();
     if (position_.regime[i].motion == Motion::slip && moved > noise)
       counters_.has_slipped[i] = true;
   }
+}
+
+void StageRun::commit(const Reached& reached)
+{
+  counters_.work_lost += work_between(position_.x, t_, reached.x, reached.t, 0);
+  note_slips(position_.x, reached.x);
   counters_.events += reached.is_event ? 1 : 0;
   position_.x = reached.x;
   t_ = reached.t;
@@ -274,7 +283,11 @@ std::string StageRun::run()
   int standstill = 0;
   while (t_ < 1.0)
   {
+    const VectorX x_before = position_.x;
     std::string not_held = choose_regime(stage_, position_, t_, arrival);
+    counters_.work_lost += position_.jump_work;
+    if (position_.jump_work > 0.0)
+      note_slips(x_before, position_.x);
     if (!not_held.empty())
       return not_held;
     excess_at_start_ = {};

@@ -48,7 +48,8 @@ double force_scale(const Model& model, const VectorX& x)
 std::optional<VectorX> solve_at(Stage& stage, const Regime& regime, const VectorX& start, double t,
                                 const VectorX& guess)
 {
-  constexpr int iteration_limit = 40;
+  constexpr int iteration_limit = 80;
+  constexpr int deepest = 24; // a step out of contact may be far too long
   const Model& model = stage.model;
   const LoadState now = stage.at(t);
   Equations& equations = stage.equations;
@@ -64,16 +65,16 @@ std::optional<VectorX> solve_at(Stage& stage, const Regime& regime, const Vector
     if (!step.allFinite())
       return std::nullopt;
     double share = 1.0;
-    for (int halving = 0; halving < 10; ++halving, share *= 0.5)
+    for (int halving = 0; halving <= deepest; ++halving, share *= 0.5)
     {
       const VectorX trial = x - share * step;
       assemble(model, regime, start, now, stage.rate, trial, equations);
-      if (is_settled(model, equations) || merit(model, equations) <= (1.0 - 0.1 * share) * before)
+      if (is_settled(model, equations) || merit(model, equations) <= (1.0 - 1e-3 * share) * before)
       {
         x = trial;
         break;
       }
-      if (halving == 9)
+      if (halving == deepest)
         return std::nullopt;
     }
   }

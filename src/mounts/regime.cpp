@@ -31,8 +31,14 @@ public:
 
   std::string run()
   {
-    if (pivot() || try_all())
-      return {};
+    position_.jump_work = 0.0;
+    for (std::size_t jump = 0; jump <= 2 * stage_.model.slides.size(); ++jump)
+    {
+      if (pivot() || try_all())
+        return {};
+      if (!run_to_stop())
+        break;
+    }
     return explain();
   }
 
@@ -45,6 +51,8 @@ private:
   void set(const Candidate& candidate, bool is_on);
   bool pivot();
   bool try_all();
+  std::optional<VectorX> free_motion();
+  bool run_to_stop();
   std::string explain();
   double rate_scale() const;
   Limit limit(std::size_t i) const;
@@ -256,8 +264,8 @@ bool Choice::try_all()
   return false;
 }
 
-/// With every slide at its limit slipping: does a whole tank move freely?
-std::string Choice::explain()
+/// With every slide at its limit slipping: the motion that nothing resists, scaled unknowns.
+std::optional<VectorX> Choice::free_motion()
 {
   const Model& model = stage_.model;
   for (const Candidate& candidate : candidates_)
@@ -269,9 +277,52 @@ std::string Choice::explain()
       model.row_scale.asDiagonal() * stage_.equations.jacobian * model.column_scale.asDiagonal();
   const Eigen::JacobiSVD<MatrixX> svd(scaled, Eigen::ComputeFullV);
   const VectorX values = svd.singularValues();
-  if (values(model.size - 1) < 1e-12 * values(0))
+  if (!(values(model.size - 1) < 1e-12 * values(0)))
+    return std::nullopt;
+  return VectorX(svd.matrixV().col(model.size - 1));
+}
+
+/// Moves a tank that slides freely, against its friction, up to the first stop in its way.
+bool Choice::run_to_stop()
+{
+  const Model& model = stage_.model;
+  const std::optional<VectorX> scaled = free_motion();
+  if (!scaled)
+    return false;
+  VectorX motion = model.column_scale.cwiseProduct(*scaled);
+  double work = 0.0;
+  for (const Slide& slide : model.slides)
+    work += friction_of(slide, position_.x).dot(slip_of(slide, motion));
+  if (std::abs(work) < 1e-12 * motion.norm() * scale_)
+    return false; // no friction to say which way it is pulled
+  if (work > 0.0)
+    motion = -motion;
+  double distance = std::numeric_limits<double>::infinity();
+  for (const Slide& slide : model.slides)
   {
-    const VectorX free = svd.matrixV().col(model.size - 1);
+    const double slip = position_.x(slide.first + 1);
+    const double moves = motion(slide.first + 1);
+    if (std::abs(moves) < 1e-9 * motion.norm())
+      continue;
+    distance = std::min(distance,
+                        (moves > 0.0 ? slide.forward - slip : slide.aft + slip) / std::abs(moves));
+  }
+  if (!std::isfinite(distance) || distance * motion.norm() < decided * scale_ / stiffness_scale)
+    return false;
+  position_.jump_work += std::abs(work) * distance;
+  position_.x += distance * motion;
+  candidates_.clear();
+  find_candidates();
+  return true;
+}
+
+/// With every slide at its limit slipping: does a whole tank move freely?
+std::string Choice::explain()
+{
+  const Model& model = stage_.model;
+  if (const std::optional<VectorX> motion = free_motion())
+  {
+    const VectorX& free = *motion;
     Index largest = 0;
     free.segment(model.rigid(0), 6 * model.tank_count).cwiseAbs().maxCoeff(&largest);
     const Index tank = largest / 6;

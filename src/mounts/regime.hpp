@@ -11,12 +11,14 @@ struct Position
 {
   VectorX x;
   Regime regime;
-  VectorX rate; ///< dx/dt of the stage, after choose_regime
+  VectorX rate;           ///< dx/dt of the stage, after choose_regime
+  double jump_work = 0.0; ///< lost by friction while a tank ran to a stop in choose_regime [J]
 };
 
 /// Chooses what every slide at its limit and every stop at its gap does next, so that friction
 /// opposes slip and no limit is passed: a linear complementarity problem in rates, solved by least
-/// index pivoting (Murty 1974), by trying all combinations where that does not end.
+/// index pivoting (Murty 1974), by trying all combinations where that does not end. A tank pulled
+/// beyond all friction runs to the first stop in its way, quasi-statically, loads held.
 /// @param reached Slides that came to their limit by an event just now are taken as slipping first.
 /// @return Empty, or why a tank is not held any more.
 /// @throws SolveError naming tank and collar when there is no consistent choice.
