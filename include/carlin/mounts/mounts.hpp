@@ -122,8 +122,14 @@ struct MountStageResult
 /// @param flexibility Motion of all feet under unit forces at all feet, 6 nf x 6 nf, global axes;
 /// hull's
 ///   rigid motion may be in it in any determinate way. Zero: rigid bed.
-/// @return One result a stage; fewer when a tank is not held any more.
-/// @throws SolveError naming the collar that will not settle, and why.
+/// @return One result a stage; fewer when a tank is not held any more: the last then carries
+/// `not_held` and the name of the stage that failed (lost in the fitting itself: one result, with
+/// the state where it was lost). A tank pulled beyond friction runs to a stop in its way.
+/// @throws SolveError naming the collar that will not settle, and why; ValueError when sizes do not
+///   match, or the first stage has growth or foot motion.
+/// A foot's spring stands at the foot's point under a rigid arm from the ring: feet whose moments
+///   carry nothing must hold the seat up as a group. Point forces act on the axis. A tank free to
+///   turn about its axis in every collar is taken not to turn. Rigid stops give 1e-16 m/N.
 /// Method: design, section 7: unknown collar forces on the condensed flexibility of tanks, seats
 /// and hull;
 ///   friction rigid-plastic (no stick spring), semi-smooth Newton with projection on the friction
