@@ -16,4 +16,4 @@ if ! command -v xvfb-run >/dev/null 2>&1; then
   echo "make-picture.sh: there is no display and xvfb-run is not installed; run: apt-get install xvfb xauth" >&2
   exit 3
 fi
-exec xvfb-run --auto-servernum --server-args="-screen 0 1280x1024x24" "$program" "$@"
+exec xvfb-run --auto-servernum --server-args="-screen 0 1280x1024x24 -noreset" "$program" "$@"

@@ -2,6 +2,7 @@
 
 #include <X11/Xlib.h>
 #include <fmt/format.h>
+#include <memory>
 #include <vtkActor.h>
 #include <vtkCamera.h>
 #include <vtkDataSetMapper.h>
@@ -24,13 +25,17 @@ namespace
 {
 constexpr double strip = 0.16; // of the height, for caption and colour bar
 
-void require_display()
+using OpenDisplay = std::unique_ptr<Display, int (*)(Display*)>;
+
+/// Stays open while the picture is made: a server whose last client leaves starts anew, and a
+/// window asked for just then ends the process.
+OpenDisplay require_display()
 {
-  Display* display = XOpenDisplay(nullptr);
-  if (display == nullptr)
+  OpenDisplay display(XOpenDisplay(nullptr), &XCloseDisplay);
+  if (!display)
     throw ViewError("no display can be opened, and pictures need one; run viz/make-picture.sh, "
                     "which starts a virtual one");
-  XCloseDisplay(display);
+  return display;
 }
 
 vtkSmartPointer<vtkLookupTable> colour_table(const std::array<double, 2>& range)
@@ -145,7 +150,7 @@ void add_legend(vtkRenderer& renderer, const Scene& scene, vtkLookupTable& table
 void write_picture(const std::filesystem::path& file, const Scene& scene,
                    const PictureOptions& options)
 {
-  require_display();
+  const OpenDisplay display = require_display();
   vtkNew<vtkRenderWindow> window;
   window->SetOffScreenRendering(1);
   window->SetSize(options.width, options.height);
