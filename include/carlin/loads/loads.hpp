@@ -43,6 +43,10 @@ SmallCraftFactors small_craft_factors(double mass, double waterline_length, doub
 
 /// Landing patch: pressure p over a band of bottom, sized so that its upward force is
 /// mass x g x (1 + n). Partly covered shells take their share of pressure, so the size is exact.
+/// The band lies about 0.75 (forward), 0.5 or 0.25 (aft) of the bottom's length. Without a given
+/// pressure it is two thirds of the standard's larger base bottom pressure: a patch of 4.7 m2 for
+/// the launch of the loads book, section 1. Both are this project's choice; common practice, no
+/// source.
 /// @param craft_mass Of the whole craft, tanks included [kg].
 struct LandingLoad
 {
@@ -58,20 +62,25 @@ LandingLoad landing_load(const Structure& structure, const Landing& landing, con
 
 /// Still water: hydrostatic pressure on the outer shells (bottom, side) below a level or trimmed
 /// plane that balances weight and moments (heave, trim, heel by Newton); pressure integrated on cut
-/// cells.
+/// cells. Exact: weight and buoyancy on one normal of the plane, no residual moment.
 struct Flotation
 {
-  double draught = 0.0;        ///< of the plane at x = 0, y = 0 above z = 0 [m]
-  double trim = 0.0;           ///< slope dz/dx of the water plane, [rad], bow-down positive
-  double heel = 0.0;           ///< slope dz/dy [rad]
-  double displaced_mass = 0.0; ///< [kg]
+  double draught = 0.0;          ///< of the plane at x = 0, y = 0 above z = 0 [m]
+  double trim = 0.0;             ///< slope dz/dx of the water plane [-], bow-down positive
+  double heel = 0.0;             ///< slope dz/dy of the water plane [-]
+  Vector3 up = Vector3::UnitZ(); ///< unit normal of the water plane
+  double displaced_mass = 0.0;   ///< [kg]
   HullLoad load;
 };
-/// @throws SolveError when the hull cannot carry the weight (would be swamped).
+/// @throws SolveError when the hull cannot carry the weight (would be swamped), or its outer shell
+/// is open below the water.
 Flotation still_water(const Structure& structure, const MassProperties& craft);
 
 /// Gravity on the structure's own mass: -g z (6 n).
 VectorX gravity_forces(const Structure& structure);
+/// The same against `up`, the unit normal of the water: of a trimmed boat the two differ by a
+/// uniform acceleration, which inertia relief takes up; only with this one is it zero.
+VectorX gravity_forces(const Structure& structure, const Vector3& up);
 
 /// Thermal forces of temperature rises by part index [K] (size of mesh.parts).
 VectorX thermal_forces(const Structure& structure, const std::vector<double>& rise_by_part);

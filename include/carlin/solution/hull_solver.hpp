@@ -19,6 +19,9 @@ public:
   SparseFactor& operator=(SparseFactor&&) noexcept;
   /// Many right-hand sides in one block: (n) x (columns).
   MatrixX solve(const MatrixX& right_hand_sides) const;
+  /// Squared diagonal of the factor, in the order of the matrix's rows: what elimination has left
+  /// of each diagonal entry. A pivot that is nothing but round-off betrays a mechanism.
+  VectorX pivots() const;
 
 private:
   struct Impl; // CHOLMOD (AMD ordering) or Eigen's LDLT, chosen when built
@@ -44,14 +47,17 @@ public:
   bool is_floating() const { return is_floating_; }
 
 private:
+  void factor(const SparseMatrix& reduced);
+  void find_imposed_displacement(const SparseMatrix& stiffness);
+
   const Structure* structure_;
   std::vector<Index> held_;
-  std::vector<Index> free_to_reduced_;
+  std::vector<Index> free_to_reduced_; ///< row of the reduced matrix of each freedom, -1: held
   std::vector<Index> reduced_to_free_;
   VectorX imposed_;
   bool is_floating_ = true;
-  std::unique_ptr<SparseFactor> factor_;
-  SparseMatrix springs_stiffness_; ///< stiffness with springs to ground added
+  std::unique_ptr<SparseFactor> factor_; ///< absent when nothing is free to move
+  SparseMatrix held_rows_;               ///< of the stiffness: (held) x (6 n)
 };
 
 /// Rigid-body acceleration of a mass under a resultant: a(x) = linear + angular x (x - centre).

@@ -85,7 +85,9 @@ struct Structure
   std::vector<SupportedFreedom> supported; ///< empty for a floating hull
   SparseMatrix stiffness;                  ///< full symmetric, 6 n x 6 n, without supports
   SparseMatrix mass; ///< consistent, incl. weld allowance, equipment, outfit (tanks not)
-  VectorX node_area; ///< share of shell area of each node [m^2]; base-hull weights of the outfit
+  /// Share of each node in the area of outer shell and deck [m^2]; without a hull: of all shells
+  /// (zero in a structure of members alone).
+  VectorX node_area;
   std::vector<MassEntry> mass_account; ///< tanks not included
   MassProperties mass_properties;      ///< of `mass`
   const Mesh* mesh = nullptr;          ///< must outlive the structure
@@ -98,6 +100,8 @@ struct Outfit
   double decay = 0.0; ///< exponent lambda of the weight exp(lambda x) [1/m]
   std::vector<std::pair<Index, double>>
       point_masses; ///< mesh point, mass [kg]; hull points of the base
+  /// Centre of gravity found less the one stated [m]: x is met, y and z follow from the geometry.
+  Vector3 centre_mismatch = Vector3::Zero();
 };
 
 /// Elements and matrices of one configuration.
@@ -124,10 +128,19 @@ struct Footprint
 };
 
 /// Statically equivalent weights, area-weighted least squares: forces alone where three nodes not
-/// in line are covered, with nodal moments otherwise.
+/// in line are covered, with nodal moments otherwise. Covered are the nodes of the surface nearest
+/// to the centre inside the rectangle, measured in x and y on level plating, x and z on
+/// fore-and-aft plating, y and z on transverse plating; with fewer than three the nodes of the
+/// nearest cells.
 /// @throws SolveError("<what>: no structure under its footprint at ...").
 Footprint footprint(const Structure& structure, const FootprintArea& area, const Vector3& point,
                     const std::string& what);
+/// The least squares alone: weights (6 positions) x 6 of nodes at `positions` with `areas` (any
+/// unit, > 0) for unit force and moment at `point`: smallest sum of force^2 / area, so that forces
+/// are area times a linear field; their resultant is exact. Nodes in line also take moments about
+/// the line, a single node all moments.
+MatrixX spreading_weights(const std::vector<Vector3>& positions, const std::vector<double>& areas,
+                          const Vector3& point);
 /// On one node: force and moment as they are.
 Footprint point_footprint(const Structure& structure, Index node);
 /// Structure node at a named frame point. @throws SolveError if nothing stands there.

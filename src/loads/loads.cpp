@@ -1,1 +1,0 @@
-#include "carlin/loads/loads.hpp"
