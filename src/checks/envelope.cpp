@@ -117,7 +117,7 @@ std::string joined_remarks(const std::vector<std::string>& remarks)
   std::string text;
   for (const std::string& remark : remarks)
     if (!remark.empty())
-      text += (text.empty() ? "" : "; ") + remark;
+      text += text.empty() ? remark : "; " + remark;
   return text;
 }
 } // namespace carlin

@@ -64,9 +64,9 @@ void add_stiffness_checks(const CheckContext& context, const ConfigurationSoluti
         std::ranges::find_if(base.stiffness.bays, [&](const BayStiffness& other)
                              { return other.from == bay.from && other.to == bay.to; });
     if (same != base.stiffness.bays.end())
-      add_bay(context, bay, *same, bay.from + " to " + bay.to, weight, envelope);
+      add_bay(context, bay, *same, fmt::format("{} to {}", bay.from, bay.to), weight, envelope);
   }
   add_bay(context, found.whole, base.stiffness.whole,
-          "whole, " + found.whole.from + " to " + found.whole.to, weight, envelope);
+          fmt::format("whole, {} to {}", found.whole.from, found.whole.to), weight, envelope);
 }
 } // namespace carlin
