@@ -196,7 +196,8 @@ Range Fields::range(std::string_view key) const
 
 double Fields::stiffness(std::string_view key) const
 {
-  if (has(key) && node(key).text() == "rigid")
+  // A turning spring left out is rigid: the stated forces per travel are those of the whole seat.
+  if (!has(key) || node(key).text() == "rigid")
     return std::numeric_limits<double>::infinity();
   return quantity(key);
 }

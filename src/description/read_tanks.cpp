@@ -161,21 +161,21 @@ const Section foot_section = {
 
 const Section stiffness_section = {
     "stiffness",
-    "Of one foot with its share of the seat, in the tank's axes. `rigid` may be written for any; 0 "
-    "carries nothing.",
+    "Of one foot with its share of the seat, in the tank's axes, from the foot's place up to the ring. "
+    "`rigid` may be written for any; 0 carries nothing.",
     {
         of_form(Form::stiffness, "along", Dimension::force_per_length, "", Bound::not_negative),
         of_form(Form::stiffness, "across", Dimension::force_per_length, "", Bound::not_negative),
         of_form(Form::stiffness, "upright", Dimension::force_per_length, "", Bound::not_negative),
         of_form(Form::stiffness, "about_along", Dimension::rotational_stiffness, "",
                 Bound::not_negative)
-            .optional("0"),
+            .optional("rigid"),
         of_form(Form::stiffness, "about_across", Dimension::rotational_stiffness, "",
                 Bound::not_negative)
-            .optional("0"),
+            .optional("rigid"),
         of_form(Form::stiffness, "about_upright", Dimension::rotational_stiffness, "",
                 Bound::not_negative)
-            .optional("0"),
+            .optional("rigid"),
     }};
 
 StatedGrowth read_growth(const Node& node)

@@ -1,0 +1,26 @@
+# The same model run twice gives identical tables; with one thread and with two they agree to 1e-9.
+function(run_check threads folder)
+  set(ENV{OMP_NUM_THREADS} ${threads})
+  set(ENV{OPENBLAS_NUM_THREADS} ${threads})
+  file(REMOVE_RECURSE ${folder})
+  execute_process(COMMAND ${CARLIN} check ${MODEL} --into ${folder} RESULT_VARIABLE code
+    OUTPUT_FILE ${folder}.txt ERROR_VARIABLE errors)
+  if(NOT code MATCHES "^[01]$")
+    message(FATAL_ERROR "exit status ${code}: ${errors}")
+  endif()
+endfunction()
+run_check(1 ${FOLDER}/first)
+run_check(1 ${FOLDER}/second)
+run_check(2 ${FOLDER}/two-threads)
+foreach(table checks stiffness collars masses joints)
+  execute_process(COMMAND ${CMAKE_COMMAND} -E compare_files ${FOLDER}/first/${table}.csv
+    ${FOLDER}/second/${table}.csv RESULT_VARIABLE differs)
+  if(differs)
+    message(FATAL_ERROR "${table}.csv differs between two runs of the same model")
+  endif()
+  execute_process(COMMAND ${COMPARE} ${FOLDER}/first/${table}.csv ${FOLDER}/two-threads/${table}.csv 1e-9
+    RESULT_VARIABLE differs OUTPUT_VARIABLE text ERROR_VARIABLE text)
+  if(differs)
+    message(FATAL_ERROR "${table}.csv differs between one and two threads: ${text}")
+  endif()
+endforeach()
