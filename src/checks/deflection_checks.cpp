@@ -26,18 +26,27 @@ void limit_by_span(Check& check, const StageContext& context, const std::string&
   check.formula = fmt::format("{}: {:.0f} mm / {:g}", check.formula, span * 1e3, *factor);
 }
 
-void add_panel(const StageContext& context, const Panel& panel, Envelope& envelope)
+void add_panels(const StageContext& context, Envelope& envelope)
 {
-  const MeshPart& part = part_of(context, panel.part);
-  Check check = stage_check(context, "panel deflection", part.name);
-  check.demand =
-      panel_deflection(*context.configuration.structure, panel, context.stage.displacement);
-  check.remark = coarse_remark(panel);
-  limit_by_span(check, context,
-                part.plate_kind == PlateKind::bulkhead ? "bulkhead_panel_deflection"
-                                                       : "panel_deflection",
-                panel.short_side);
-  envelope.put(std::move(check), panel.centre);
+  const std::vector<Panel>& panels = context.configuration.panels;
+  std::vector<double> found;
+  for (const Panel& panel : panels)
+    found.push_back(
+        panel_deflection(*context.configuration.structure, panel, context.stage.displacement));
+  for (const auto& [part_index, p] : worst_of_each(
+           panels.size(), [&](std::size_t at) { return panels[at].part; },
+           [&](std::size_t at) { return std::abs(found[at]) / panels[at].short_side; }))
+  {
+    const MeshPart& part = part_of(context, part_index);
+    Check check = stage_check(context, "panel deflection", part.name);
+    check.demand = found[p];
+    check.remark = coarse_remark(panels[p]);
+    limit_by_span(check, context,
+                  part.plate_kind == PlateKind::bulkhead ? "bulkhead_panel_deflection"
+                                                         : "panel_deflection",
+                  panels[p].short_side);
+    envelope.put(std::move(check), panels[p].centre);
+  }
 }
 
 std::string member_criterion(const MeshPart& part)
@@ -46,6 +55,22 @@ std::string member_criterion(const MeshPart& part)
   if (part.is_primary)
     return is_deck ? "deck_primary_member_deflection" : "primary_member_deflection";
   return is_deck ? "deck_member_deflection" : "member_deflection";
+}
+
+void add_members(const StageContext& context, Envelope& envelope)
+{
+  const std::vector<MemberDeflection> found = member_deflections(
+      *context.configuration.structure, context.member_spans, context.stage.displacement);
+  for (const auto& [part_index, i] : worst_of_each(
+           found.size(), [&](std::size_t at) { return found[at].part; },
+           [&](std::size_t at) { return std::abs(found[at].deflection) / found[at].span; }))
+  {
+    const MeshPart& part = part_of(context, part_index);
+    Check check = stage_check(context, "member deflection", part.name);
+    check.demand = found[i].deflection;
+    limit_by_span(check, context, member_criterion(part), found[i].span);
+    envelope.put(std::move(check), found[i].place);
+  }
 }
 
 void add_girder(const StageContext& context, Envelope& envelope)
@@ -77,17 +102,8 @@ void add_deflection_checks(const StageContext& context, Envelope& envelope)
 {
   if (context.load_case.load_class == CaseClass::accidental)
     return; // nothing need keep its shape in an accident
-  for (const Panel& panel : context.configuration.panels)
-    add_panel(context, panel, envelope);
-  for (const MemberDeflection& found :
-       member_deflections(*context.configuration.structure, context.stage.displacement))
-  {
-    const MeshPart& part = part_of(context, found.part);
-    Check check = stage_check(context, "member deflection", part.name);
-    check.demand = found.deflection;
-    limit_by_span(check, context, member_criterion(part), found.span);
-    envelope.put(std::move(check), found.place);
-  }
+  add_panels(context, envelope);
+  add_members(context, envelope);
   add_girder(context, envelope);
 }
 } // namespace carlin

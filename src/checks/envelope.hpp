@@ -24,7 +24,26 @@ struct StageContext
   const ConfigurationSolution& configuration;
   const CaseSolution& load_case;
   const StageSolution& stage;
+  const std::vector<MemberSpan>& member_spans;
 };
+
+/// Of a list of readings the worst of each subject: position in the list by subject's index, so
+/// that words are made once a subject and not once an element.
+/// @param subject_of, demand_of Functions of a position.
+template <typename SubjectOf, typename DemandOf>
+std::map<Index, std::size_t> worst_of_each(std::size_t count, SubjectOf subject_of,
+                                           DemandOf demand_of)
+{
+  std::map<Index, std::size_t> worst;
+  for (std::size_t i = 0; i < count; ++i)
+  {
+    const auto [place, is_new] = worst.emplace(subject_of(i), i);
+    // Not "greater": a demand that is no number must be kept, to be judged not met.
+    if (!is_new && !(demand_of(i) <= demand_of(place->second)))
+      place->second = i;
+  }
+  return worst;
+}
 
 /// Keeps the worst of all checks of the same criterion and subject.
 class Envelope

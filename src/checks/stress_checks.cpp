@@ -53,87 +53,119 @@ std::string stress_remark(const Panel& panel, const PanelStress& stress)
                            stress.peak / megapascal)});
 }
 
-void add_plate(const StageContext& context, const Panel& panel, const PanelStress& stress,
-               Envelope& envelope)
-{
-  const MeshPart& part = part_of(context, panel.part);
-  const PartStrength strength = part_strength(context.model, part);
-  Check check = stage_check(context, "plate stress", part.name);
-  check.demand = stress.nominal;
-  check.unit = "Pa";
-  check.remark = stress_remark(panel, stress);
-  limit_by_yield(check, context, "plate_stress", strength, 1.0);
-  envelope.put(std::move(check), stress.place);
-
-  if (part.surface != Surface::deck)
-    return;
-  const Shell& shell =
-      context.configuration.structure->shells[static_cast<std::size_t>(panel.shells.front())];
-  const ShellSection& section =
-      context.configuration.structure->shell_sections[static_cast<std::size_t>(shell.section)];
-  Check buckling = stage_check(context, "deck buckling", part.name);
-  buckling.demand = buckling_usage({.youngs_modulus = strength.youngs_modulus,
-                                    .poissons_ratio = strength.poissons_ratio,
-                                    .thickness = section.thickness,
-                                    .short_side = panel.short_side,
-                                    .long_side = panel.long_side,
-                                    .yield = strength.yield},
-                                   stress.mean_membrane);
-  buckling.limit = criterion_limit(context.model, "deck_buckling");
-  buckling.unit = "-";
-  cite(buckling, context.model, "deck_buckling");
-  envelope.put(std::move(buckling), panel.centre);
-}
-
-void add_member(const StageContext& context, const Member& member, const MemberStress& stress,
-                Envelope& envelope)
-{
-  const MeshPart& part = part_of(context, member.part);
-  const PartStrength strength = part_strength(context.model, part);
-  Check check = stage_check(context, "member stress", part.name);
-  check.demand = stress.nominal;
-  check.unit = "Pa";
-  limit_by_yield(check, context, "member_stress", strength, 1.0);
-  envelope.put(std::move(check), stress.place);
-
-  Check shear = stage_check(context, "member shear", part.name);
-  shear.demand = stress.shear;
-  shear.unit = "Pa";
-  limit_by_yield(shear, context, "member_shear", strength, 1.0 / std::numbers::sqrt3);
-  envelope.put(std::move(shear), stress.place);
-}
-
-void add_joint(const StageContext& context, const JointLoad& load, Envelope& envelope)
+double deck_usage(const StageContext& context, const Panel& panel, const PanelStress& stress)
 {
   const Structure& structure = *context.configuration.structure;
-  const Joint& joint = context.configuration.mesh->joints[static_cast<std::size_t>(load.joint)];
-  const JointSpring& spring = structure.joints[static_cast<std::size_t>(load.spring)];
-  Check check = stage_check(context, "joint load", joint.name);
-  check.demand = Vector3(load.along, load.across, load.normal).norm();
-  check.unit = "N/m";
-  check.limit = criterion_limit(context.model, "joint_load");
-  cite(check, context.model, "joint_load");
-  check.remark =
-      fmt::format("along {:.3g}, across {:.3g}, normal {:.3g} kN/m, slip {:.2g} mm",
-                  load.along / 1e3, load.across / 1e3, load.normal / 1e3, load.slip * 1e3);
-  if (!check.limit)
-    check.remark += "; give joint_load, what bond, weld or bolts carry per metre";
-  envelope.put(std::move(check), structure.nodes[static_cast<std::size_t>(spring.node_part)]);
+  const Shell& shell = structure.shells[static_cast<std::size_t>(panel.shells.front())];
+  const PartStrength strength = part_strength(context.model, part_of(context, panel.part));
+  return buckling_usage(
+      {.youngs_modulus = strength.youngs_modulus,
+       .poissons_ratio = strength.poissons_ratio,
+       .thickness = structure.shell_sections[static_cast<std::size_t>(shell.section)].thickness,
+       .short_side = panel.short_side,
+       .long_side = panel.long_side,
+       .yield = strength.yield},
+      stress.mean_membrane);
+}
+
+void add_plates(const StageContext& context, Envelope& envelope)
+{
+  const std::vector<Panel>& panels = context.configuration.panels;
+  const std::vector<PanelStress> stresses =
+      panel_stresses(*context.configuration.structure, panels, context.stage);
+  const auto part_at = [&](std::size_t p) { return panels[p].part; };
+  for (const auto& [part, p] :
+       worst_of_each(panels.size(), part_at, [&](std::size_t at) { return stresses[at].nominal; }))
+  {
+    Check check = stage_check(context, "plate stress", part_of(context, part).name);
+    check.demand = stresses[p].nominal;
+    check.unit = "Pa";
+    check.remark = stress_remark(panels[p], stresses[p]);
+    limit_by_yield(check, context, "plate_stress",
+                   part_strength(context.model, part_of(context, part)), 1.0);
+    envelope.put(std::move(check), stresses[p].place);
+  }
+  std::vector<double> usage(panels.size(), 0.0);
+  for (std::size_t p = 0; p < panels.size(); ++p)
+    if (part_of(context, panels[p].part).surface == Surface::deck)
+      usage[p] = deck_usage(context, panels[p], stresses[p]);
+  for (const auto& [part, p] :
+       worst_of_each(panels.size(), part_at, [&](std::size_t at) { return usage[at]; }))
+  {
+    if (part_of(context, part).surface != Surface::deck)
+      continue;
+    Check check = stage_check(context, "deck buckling", part_of(context, part).name);
+    check.demand = usage[p];
+    check.limit = criterion_limit(context.model, "deck_buckling");
+    check.unit = "-";
+    cite(check, context.model, "deck_buckling");
+    envelope.put(std::move(check), panels[p].centre);
+  }
+}
+
+void add_members(const StageContext& context, Envelope& envelope)
+{
+  const Structure& structure = *context.configuration.structure;
+  const std::vector<MemberStress> stresses = member_stresses(structure, context.stage);
+  const auto part_at = [&](std::size_t m) { return structure.members[m].part; };
+  const auto nominal = [&](std::size_t m) { return std::abs(stresses[m].nominal); };
+  for (const auto& [part, m] : worst_of_each(stresses.size(), part_at, nominal))
+  {
+    Check check = stage_check(context, "member stress", part_of(context, part).name);
+    check.demand = stresses[m].nominal;
+    check.unit = "Pa";
+    limit_by_yield(check, context, "member_stress",
+                   part_strength(context.model, part_of(context, part)), 1.0);
+    envelope.put(std::move(check), stresses[m].place);
+  }
+  const auto shear = [&](std::size_t m) { return stresses[m].shear; };
+  for (const auto& [part, m] : worst_of_each(stresses.size(), part_at, shear))
+  {
+    Check check = stage_check(context, "member shear", part_of(context, part).name);
+    check.demand = stresses[m].shear;
+    check.unit = "Pa";
+    limit_by_yield(check, context, "member_shear",
+                   part_strength(context.model, part_of(context, part)), 1.0 / std::numbers::sqrt3);
+    envelope.put(std::move(check), stresses[m].place);
+  }
+}
+
+double resultant_of(const JointLoad& load)
+{
+  return Vector3(load.along, load.across, load.normal).norm();
+}
+
+void add_joints(const StageContext& context, Envelope& envelope)
+{
+  const Structure& structure = *context.configuration.structure;
+  const std::vector<JointLoad> loads = joint_loads(structure, context.stage);
+  const auto joint_at = [&](std::size_t i) { return loads[i].joint; };
+  const auto demand = [&](std::size_t i) { return resultant_of(loads[i]); };
+  for (const auto& [joint, i] : worst_of_each(loads.size(), joint_at, demand))
+  {
+    const JointLoad& load = loads[i];
+    Check check =
+        stage_check(context, "joint load",
+                    context.configuration.mesh->joints[static_cast<std::size_t>(joint)].name);
+    check.demand = resultant_of(load);
+    check.unit = "N/m";
+    check.limit = criterion_limit(context.model, "joint_load");
+    cite(check, context.model, "joint_load");
+    check.remark =
+        fmt::format("along {:.3g}, across {:.3g}, normal {:.3g} kN/m, slip {:.2g} mm",
+                    load.along / 1e3, load.across / 1e3, load.normal / 1e3, load.slip * 1e3);
+    if (!check.limit)
+      check.remark += "; give joint_load, what bond, weld or bolts carry per metre";
+    const JointSpring& spring = structure.joints[static_cast<std::size_t>(load.spring)];
+    envelope.put(std::move(check), structure.nodes[static_cast<std::size_t>(spring.node_part)]);
+  }
 }
 } // namespace
 
 void add_stress_checks(const StageContext& context, Envelope& envelope)
 {
-  const ConfigurationSolution& configuration = context.configuration;
-  const Structure& structure = *configuration.structure;
-  const std::vector<PanelStress> panels =
-      panel_stresses(structure, configuration.panels, context.stage);
-  for (std::size_t p = 0; p < panels.size(); ++p)
-    add_plate(context, configuration.panels[p], panels[p], envelope);
-  const std::vector<MemberStress> members = member_stresses(structure, context.stage);
-  for (std::size_t m = 0; m < members.size(); ++m)
-    add_member(context, structure.members[m], members[m], envelope);
-  for (const JointLoad& load : joint_loads(structure, context.stage))
-    add_joint(context, load, envelope);
+  add_plates(context, envelope);
+  add_members(context, envelope);
+  add_joints(context, envelope);
 }
 } // namespace carlin

@@ -106,50 +106,54 @@ bool is_support(const Structure& structure, const PointTable& table, const Chain
   return primary != table.primary_runs.end();
 }
 
-/// Largest deflection of the nodes between two supports. The mean turn of the ends about the chord
-/// is taken off too, so that a rigid motion of a curved member is no deflection.
-MemberDeflection span_deflection(const Structure& structure, const Chain& chain, std::size_t first,
-                                 std::size_t last, const VectorX& displacement)
+MemberSpan span_between(const Chain& chain, std::size_t first, std::size_t last)
 {
-  const Vector3 start = node_position(structure, chain.nodes[first]);
-  const Vector3 chord = node_position(structure, chain.nodes[last]) - start;
-  const Vector3 along = chord.normalized();
-  const Vector3 u_first = translation(displacement, chain.nodes[first]);
-  const Vector3 u_last = translation(displacement, chain.nodes[last]);
-  const double turn = 0.5 * along.dot(rotation(displacement, chain.nodes[first]) +
-                                      rotation(displacement, chain.nodes[last]));
-  Vector3 upright = Vector3::Zero();
+  MemberSpan span{.run = chain.run, .part = chain.part, .nodes = {}, .upright = Vector3::Zero()};
+  for (std::size_t i = first; i <= last; ++i)
+    span.nodes.push_back(chain.nodes[i]);
   for (std::size_t i = first; i < last; ++i)
-    upright += chain.uprights[i];
-  upright = (upright - upright.dot(along) * along).normalized();
+    span.upright += chain.uprights[i];
+  return span;
+}
 
-  MemberDeflection result{.run = chain.run,
-                          .part = chain.part,
+MemberDeflection span_deflection(const Structure& structure, const MemberSpan& span,
+                                 const VectorX& displacement)
+{
+  const Vector3 start = node_position(structure, span.nodes.front());
+  const Vector3 chord = node_position(structure, span.nodes.back()) - start;
+  const Vector3 along = chord.normalized();
+  const Vector3 u_first = translation(displacement, span.nodes.front());
+  const Vector3 u_last = translation(displacement, span.nodes.back());
+  const double turn = 0.5 * along.dot(rotation(displacement, span.nodes.front()) +
+                                      rotation(displacement, span.nodes.back()));
+  const Vector3 upright = (span.upright - span.upright.dot(along) * along).normalized();
+
+  MemberDeflection result{.run = span.run,
+                          .part = span.part,
                           .deflection = 0.0,
                           .span = chord.norm(),
                           .place = start + 0.5 * chord};
-  for (std::size_t i = first + 1; i < last; ++i)
+  for (const Index node : span.nodes)
   {
-    const Vector3 arm = node_position(structure, chain.nodes[i]) - start;
+    const Vector3 arm = node_position(structure, node) - start;
     const double part = arm.dot(along) / result.span;
     const Vector3 off_chord = arm - arm.dot(along) * along;
-    const Vector3 moved = translation(displacement, chain.nodes[i]) - (1.0 - part) * u_first -
-                          part * u_last - turn * along.cross(off_chord);
+    const Vector3 moved = translation(displacement, node) - (1.0 - part) * u_first - part * u_last -
+                          turn * along.cross(off_chord);
     if (std::abs(moved.dot(upright)) > std::abs(result.deflection))
     {
       result.deflection = moved.dot(upright);
-      result.place = node_position(structure, chain.nodes[i]);
+      result.place = node_position(structure, node);
     }
   }
   return result;
 }
 } // namespace
 
-std::vector<MemberDeflection> member_deflections(const Structure& structure,
-                                                 const VectorX& displacement)
+std::vector<MemberSpan> member_spans(const Structure& structure)
 {
   const PointTable table = point_table(structure);
-  std::vector<MemberDeflection> results;
+  std::vector<MemberSpan> spans;
   for (const Chain& chain : chains(structure))
   {
     const std::set<Index> carriers = carrying_parts(structure, table, chain);
@@ -159,10 +163,20 @@ std::vector<MemberDeflection> member_deflections(const Structure& structure,
       if (i + 1 < chain.nodes.size() && !is_support(structure, table, chain, carriers, i))
         continue;
       if (i - first >= 2)
-        results.push_back(span_deflection(structure, chain, first, i, displacement));
+        spans.push_back(span_between(chain, first, i));
       first = i;
     }
   }
+  return spans;
+}
+
+std::vector<MemberDeflection> member_deflections(const Structure& structure,
+                                                 const std::vector<MemberSpan>& spans,
+                                                 const VectorX& displacement)
+{
+  std::vector<MemberDeflection> results;
+  for (const MemberSpan& span : spans)
+    results.push_back(span_deflection(structure, span, displacement));
   return results;
 }
 } // namespace carlin

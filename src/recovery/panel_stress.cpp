@@ -23,7 +23,7 @@ struct PanelReading
 };
 
 PanelReading panel_reading(const Structure& structure, const Panel& panel,
-                           const std::vector<SurfaceStress>& centre_stress)
+                           const std::vector<ShellStress>& stresses)
 {
   PanelReading reading{structure, panel, std::min(nominal_stress_length, panel.short_side),
                        {},        {},    {}};
@@ -32,7 +32,8 @@ PanelReading panel_reading(const Structure& structure, const Panel& panel,
     const Shell& shell = structure.shells[static_cast<std::size_t>(s)];
     reading.centres.push_back(shell_centre(structure, shell));
     reading.areas.push_back(shell_area(shell_points(structure, shell)));
-    reading.stresses.push_back(centre_stress[static_cast<std::size_t>(s)]);
+    reading.stresses.push_back(
+        surface_stress(structure, shell, stresses[static_cast<std::size_t>(s)]));
   }
   return reading;
 }
@@ -179,7 +180,7 @@ std::vector<PanelStress> panel_stresses(const Structure& structure,
                                         const std::vector<Panel>& panels,
                                         const StageSolution& stage)
 {
-  const std::vector<SurfaceStress> centre_stress = centre_stresses(structure, stage);
+  const std::vector<ShellStress> stresses = shell_stresses_of(structure, stage);
   std::vector<double> pressure(structure.shells.size(), 0.0);
   for (const auto& [shell, value] : stage.shell_pressures)
     pressure[static_cast<std::size_t>(shell)] += value;
@@ -188,7 +189,7 @@ std::vector<PanelStress> panel_stresses(const Structure& structure,
   for (std::size_t p = 0; p < panels.size(); ++p)
   {
     const Panel& panel = panels[p];
-    const PanelReading reading = panel_reading(structure, panel, centre_stress);
+    const PanelReading reading = panel_reading(structure, panel, stresses);
     PanelStress result;
     result.panel = static_cast<Index>(p);
     result.place = panel.centre;
@@ -199,11 +200,9 @@ std::vector<PanelStress> panel_stresses(const Structure& structure,
     double force = 0.0;
     for (std::size_t i = 0; i < panel.shells.size(); ++i)
     {
-      force += reading.areas[i] * pressure[static_cast<std::size_t>(panel.shells[i])];
-      result.peak =
-          std::max(result.peak,
-                   peak_stress(structure,
-                               structure.shells[static_cast<std::size_t>(panel.shells[i])], stage));
+      const auto shell = static_cast<std::size_t>(panel.shells[i]);
+      force += reading.areas[i] * pressure[shell];
+      result.peak = std::max(result.peak, stresses[shell].peak);
     }
     const Shell& shell = structure.shells[static_cast<std::size_t>(panel.shells.front())];
     const ShellSection& section = structure.shell_sections[static_cast<std::size_t>(shell.section)];

@@ -12,18 +12,14 @@ struct SurfaceStress
   Matrix3 bending = Matrix3::Zero();
 };
 
-/// Source: classical plate theory; M is moved from the reference surface to the mid-thickness.
+/// At the centre of a shell.
 SurfaceStress surface_stress(const Structure& structure, const Shell& shell,
-                             const Vector24& displacement, double xi, double eta,
-                             double temperature_rise);
+                             const ShellStress& stress);
 
-/// At all shell centres.
-std::vector<SurfaceStress> centre_stresses(const Structure& structure, const StageSolution& stage);
-
-/// Largest von Mises stress of both faces over the corners (Gauss points of a triangle) [Pa].
-double peak_stress(const Structure& structure, const Shell& shell, const StageSolution& stage);
+/// The stage's own where they have been worked out already.
+std::vector<ShellStress> shell_stresses_of(const Structure& structure, const StageSolution& stage);
 
 double von_mises(const Matrix3& stress);
-
-double temperature_rise_of(const StageSolution& stage, const Shell& shell);
+/// Of plane stress (x, y, xy).
+double plane_von_mises(const Vector3& stress);
 } // namespace carlin

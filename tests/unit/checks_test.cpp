@@ -219,6 +219,16 @@ TEST_CASE("Plate stress is judged by the limit of each class and the worst is na
   }
 }
 
+TEST_CASE("Displacements that are no numbers are refused, not passed", "[unit][checks]")
+{
+  Tension plate;
+  StageSolution stage = plate.stage("filled", 60e6);
+  stage.displacement[7] = std::nan("");
+  plate.add_case("still water", CaseClass::service, {stage});
+  CHECK_THROWS_WITH(make_checks(plate.model, plate.configuration, plate.configuration),
+                    Contains("case 'still water', stage 'filled': displacements are not finite"));
+}
+
 TEST_CASE("A coarse mesh is said to be coarse", "[unit][checks]")
 {
   Tension plate(4);

@@ -198,6 +198,25 @@ TEST_CASE("A plate in uniform bending and tension is read at both faces", "[unit
   CHECK_THAT(found, WithinAbs(panel_deflection(hand.structure, panels[0], plain), 1e-12));
 }
 
+TEST_CASE("Stages recovered together and one by one agree to the last bit", "[unit][recovery]")
+{
+  const Strip strip = clamped_strip(4);
+  StageSolution first = strip.stage, second = strip.stage;
+  second.displacement *= -2.0;
+  second.temperature_rise = {30.0};
+  const std::vector<StageSolution*> stages{&first, &second};
+  StageSolution alone = second;
+  recover_shell_stresses(strip.hand.structure, stages);
+  REQUIRE(first.shell_stresses.size() == strip.hand.structure.shells.size());
+  const std::vector<PlateStress> together = plate_stresses(strip.hand.structure, second);
+  const std::vector<PlateStress> apart = plate_stresses(strip.hand.structure, alone);
+  for (std::size_t s = 0; s < apart.size(); ++s)
+  {
+    CHECK(together[s].inner == apart[s].inner);
+    CHECK(together[s].peak == apart[s].peak);
+  }
+}
+
 TEST_CASE("A rise of temperature that is free to grow makes no stress", "[unit][recovery]")
 {
   HandStructure hand;

@@ -85,6 +85,7 @@ struct ConfigurationSolution
 /// Checks of one configuration, worst first. One line per criterion and part (and collar), the
 /// governing case and stage named.
 /// @param base For stiffness ratios; may be the same object.
+/// @throws SolveError for a stage whose displacements are not finite.
 std::vector<Check> make_checks(const Model& model, const ConfigurationSolution& configuration,
                                const ConfigurationSolution& base);
 } // namespace carlin

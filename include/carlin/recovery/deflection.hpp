@@ -29,10 +29,20 @@ GirderDeflection girder_deflection(const Structure& structure, const VectorX& di
 double panel_deflection(const Structure& structure, const Panel& panel,
                         const VectorX& displacement);
 
-/// Deflection of a member from the chord of its supports, one entry a span with a node inside.
-/// Supports: ends of the run; plates that cross it (other parts than the plating it runs on,
-/// upright to it); for members that are not primary, primary members that cross it. Spans of
-/// primary members therefore reach from plate to plate.
+/// Part of a run between two supports, with a node inside. Supports: ends of the run; plates that
+/// cross it (other parts than the plating it runs on, upright to it); for members that are not
+/// primary, primary members that cross it. Spans of primary members therefore reach from plate to
+/// plate.
+struct MemberSpan
+{
+  Index run = -1, part = -1;
+  std::vector<Index> nodes;           ///< from support to support
+  Vector3 upright = Vector3::UnitZ(); ///< mean of the profile's, not yet square to the chord
+};
+std::vector<MemberSpan> member_spans(const Structure& structure);
+
+/// Deflection of a member from the chord of its supports. The mean turn of the ends about the chord
+/// is taken off too, so that a rigid motion of a curved member is no deflection.
 struct MemberDeflection
 {
   Index run = -1, part = -1;
@@ -41,5 +51,6 @@ struct MemberDeflection
   Vector3 place = Vector3::Zero();
 };
 std::vector<MemberDeflection> member_deflections(const Structure& structure,
+                                                 const std::vector<MemberSpan>& spans,
                                                  const VectorX& displacement);
 } // namespace carlin

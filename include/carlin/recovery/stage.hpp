@@ -11,6 +11,15 @@
 
 namespace carlin
 {
+/// Stress of one shell, homogeneous plate: at its centre in the frame of shell_frame (x, y, xy),
+/// the inner face membrane + bending, the outer face membrane - bending [Pa].
+struct ShellStress
+{
+  Vector3 membrane = Vector3::Zero();
+  Vector3 bending = Vector3::Zero();
+  double peak = 0.0; ///< largest von Mises at corners, both faces; Gauss points of a triangle [Pa]
+};
+
 /// Result of one stage of one case on one configuration.
 struct StageSolution
 {
@@ -21,6 +30,8 @@ struct StageSolution
   std::vector<std::pair<Index, double>> shell_pressures; ///< [Pa], along the inward normal
   std::vector<Vector12> member_fixed_end; ///< one a member: sum of its equivalent loads, line loads
                                           ///< and temperature alike (empty: none)
+  std::vector<ShellStress> shell_stresses; ///< one a shell, by recover_shell_stresses(); empty: not
+                                           ///< yet worked out
   RigidAcceleration acceleration;
   Vector6 pin_reaction = Vector6::Zero();   ///< resultant about the origin; audit
   double largest_load = 0.0;                ///< norm the audit compares with [N]

@@ -3,12 +3,17 @@
 #include "carlin/recovery/panels.hpp"
 #include "carlin/recovery/stage.hpp"
 
+#include <span>
 #include <vector>
 
 namespace carlin
 {
+/// Fills `shell_stresses` of many stages of one structure at once: the strain matrices, which cost
+/// most, are made once a shell. Stages left out are worked out one by one wherever they are read.
+/// N/t and 6 M/t^2, M moved from the reference surface to the mid-thickness.
+void recover_shell_stresses(const Structure& structure, std::span<StageSolution* const> stages);
+
 /// Plate stress of one shell: von Mises at both faces and the middle.
-/// Homogeneous plates: N/t +- 6 M/t^2, M about the mid-thickness.
 struct PlateStress
 {
   double mid = 0.0, inner = 0.0, outer = 0.0; ///< at the element centre [Pa]
