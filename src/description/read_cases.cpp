@@ -130,7 +130,7 @@ const Section landing_section = {
                 Bound::positive)
             .optional("`pressure` and `length`"),
         quantity("pressure", Dimension::pressure, Bound::positive, "on the patch")
-            .optional("twice the standard's bottom base pressure"),
+            .optional("two thirds of the standard's larger bottom base pressure"),
         quantity("length", Dimension::length, Bound::positive, "of the patch along x")
             .optional("`acceleration`"),
     }};
