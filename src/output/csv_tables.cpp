@@ -107,6 +107,9 @@ std::string joints_csv(const RunResult& result)
     const Structure& structure = *configuration.structure;
     for (const CaseSolution& load_case : configuration.cases)
       for (const StageSolution& stage : load_case.stages)
+      {
+        if (stage.displacement.size() == 0)
+          continue; // the history has ended: a tank is not held
         for (const JointLoad& load : joint_loads(structure, stage))
         {
           const JointSpring& spring = structure.joints[static_cast<std::size_t>(load.spring)];
@@ -116,6 +119,7 @@ std::string joints_csv(const RunResult& result)
                      static_cast<double>(load.spring), at.x(), at.y(), at.z(), load.along,
                      load.across, load.normal, load.rotation, load.slip});
         }
+      }
   }
   return table.text();
 }

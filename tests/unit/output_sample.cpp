@@ -43,9 +43,8 @@ Structure sample_structure(const Mesh& mesh)
   section.offset = 0.003;
   section.mass_per_area = 16.0;
   structure.shell_sections = {section};
-  MemberSection profile;
-  profile.axial_stiffness = 3.43e7;
-  profile.bending_stiffness_y = 1.4e4;
+  MemberSection profile =
+      member_section(flat_bar_constants(0.07, 0.007), 70.0e9, 0.33, 2660.0, 23.0e-6);
   profile.shear_stiffness_y = std::numeric_limits<double>::infinity();
   structure.member_sections = {profile};
   structure.node_area = VectorX::Constant(node_count, 0.125);
