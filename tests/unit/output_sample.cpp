@@ -11,7 +11,7 @@ namespace
 {
 constexpr Index node_count = 8;
 
-Structure sample_structure(const Mesh& mesh)
+Structure sample_structure(const Mesh& mesh, Standing standing)
 {
   Structure structure;
   structure.mesh = &mesh;
@@ -52,7 +52,8 @@ Structure sample_structure(const Mesh& mesh)
   for (Index freedom = 0; freedom < 6 * node_count; ++freedom)
     structure.mass.insert(freedom, freedom) =
         freedom % 6 < 3 ? 2.0 + static_cast<double>(freedom / 6) : 0.01;
-  structure.supported = {{0, 0.001, 0.0, 0}, {1, 0.0, 5e5, 0}};
+  if (standing == Standing::base) // the other one floats
+    structure.supported = {{0, 0.001, 0.0, 0}, {1, 0.0, 5e5, 0}};
   return structure;
 }
 
@@ -160,7 +161,7 @@ ConfigurationSolution sample_configuration(const std::string& name, Standing sta
   configuration.craft.standing = standing;
   configuration.mesh = sample_mesh();
   configuration.structure =
-      std::make_shared<const Structure>(sample_structure(*configuration.mesh));
+      std::make_shared<const Structure>(sample_structure(*configuration.mesh, standing));
   configuration.mass_account = {{"bottom", "plating", 100.0, {1.0, 0.0, 0.0}},
                                 {"girder-2", "members", 20.0, {1.0, 0.0, 0.1}}};
   BayStiffness bay;
@@ -237,7 +238,7 @@ RunResult sample_result()
     stage.mounts_low = stage.mounts_high = sample_mounts(stage.name);
   result.checks = {
       sample_check("converted", 142.4e6, 125.0e6), sample_check("converted", 5200.0, std::nullopt),
-      sample_check("converted", 60.0e6, 125.0e6), sample_check("converted", 90.0e6, 125.0e6),
+      sample_check("converted", 65.0e6, 125.0e6), sample_check("converted", 90.0e6, 125.0e6),
       sample_check("as built", 150.0e6, 125.0e6)};
   result.quality.cells = 3;
   result.audit.largest_pin_reaction = 2.5e-12;

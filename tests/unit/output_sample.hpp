@@ -8,8 +8,8 @@
 namespace carlin
 {
 /// A small run built by hand: a base and a converted configuration of two quadrilaterals, a
-/// triangle, a member, a joint spring, held at one node; the converted one has a tank on two
-/// collars, each on one foot, and one case of two stages.
+/// triangle, a member, a joint spring; the base on supports; the converted one floats, has a tank
+/// on two collars, each on one foot, and one case of two stages.
 RunResult sample_result();
 
 /// Displacement of the sample's second stage: a known turn and shift plus a bulge at node 4.

@@ -92,9 +92,12 @@ TEST_CASE("structure.vtu gives back what was solved", "[unit][output][vtk]")
 
   vtkFieldData* points = grid->GetPointData();
   CHECK(row(points, "mass [kg]", 5) == Row{7.0});
-  CHECK(row(points, "held, u_x u_y u_z r_x r_y r_z [-]", 0) == Row{1, 0, 0, 0, 0, 0});
-  CHECK(row(points, "imposed motion [m, rad]", 0)[0] == 0.001);
-  CHECK(row(points, "spring to ground [N/m, N m/rad]", 0)[1] == 5e5);
+  CHECK(points->GetArray("spring to ground [N/m, N m/rad]") == nullptr); // it floats
+  const auto base = read_grid(folder.path() / "r/vtk/as-built/structure.vtu");
+  vtkFieldData* held = base->GetPointData();
+  CHECK(row(held, "held, u_x u_y u_z r_x r_y r_z [-]", 0) == Row{1, 0, 0, 0, 0, 0});
+  CHECK(row(held, "imposed motion [m, rad]", 0)[0] == 0.001);
+  CHECK(row(held, "spring to ground [N/m, N m/rad]", 0)[1] == 5e5);
 }
 
 TEST_CASE("A stage file gives back forces and displacement to the last bit", "[unit][output][vtk]")
