@@ -72,22 +72,6 @@ std::vector<MountStage> mount_stages(const std::vector<StageState>& states,
   return stages;
 }
 
-std::vector<MountStageResult> run_mounts(const ConfiguredCraft& craft, const HullAtFeet& hull,
-                                         std::vector<MountStage> stages, RangeEnd end)
-{
-  // At the fitting the hull's own give under the tank's weight is part of how it lies, not a
-  // motion.
-  const MatrixX stiff = MatrixX::Zero(hull.flexibility.rows(), hull.flexibility.cols());
-  const std::vector<MountStageResult> fitting =
-      run_history(craft.tanks, stiff, {stages.front()}, end);
-  if (fitting.empty() || !fitting.front().not_held.empty())
-    return fitting;
-  const VectorX lies = hull.flexibility * fitting.front().foot_forces;
-  for (MountStage& stage : stages)
-    stage.foot_motion -= lies;
-  return run_history(craft.tanks, hull.flexibility, stages, end);
-}
-
 double largest(const Eigen::Ref<const VectorX>& forces)
 {
   return forces.size() == 0 ? 0.0 : forces.cwiseAbs().maxCoeff();
@@ -173,8 +157,8 @@ CaseSolution solve_case(const Model& model, const ConfiguredCraft& craft,
   if (!craft.tanks.empty())
   {
     const std::vector<MountStage> stages = mount_stages(states, loads, hull, displacements);
-    low = run_mounts(craft, hull, stages, RangeEnd::low);
-    high = run_mounts(craft, hull, stages, RangeEnd::high);
+    low = run_history(craft.tanks, hull.flexibility, stages, RangeEnd::low);
+    high = run_history(craft.tanks, hull.flexibility, stages, RangeEnd::high);
   }
 
   CaseSolution result{load_case.name, load_case.load_class, {}};
@@ -260,6 +244,13 @@ ConfigurationSolution solve_configuration(const Model& model, const Lattice& lat
       solution.cases.push_back(solve_case(model, craft, structure, solution.solver.get(), hull,
                                           loader, load_case, audit));
   watch.lap("cases");
+  std::vector<StageSolution*> solved;
+  for (CaseSolution& load_case : solution.cases)
+    for (StageSolution& stage : load_case.stages)
+      if (stage.displacement.size() > 0)
+        solved.push_back(&stage);
+  recover_shell_stresses(structure, solved);
+  watch.lap("shell stresses");
   solution.panels = find_panels(structure);
   watch.lap("panels");
   return solution;

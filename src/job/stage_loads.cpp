@@ -15,12 +15,6 @@ bool is_named(const std::vector<std::string>& names, const std::string& name)
   return names.empty() || std::ranges::find(names, name) != names.end();
 }
 
-Vector3 gravity(const StageState& state)
-{
-  return state.water == WaterState::none ? Vector3::Zero().eval()
-                                         : Vector3(0.0, 0.0, -standard_gravity);
-}
-
 void add(StageLoads& loads, const HullLoad& load, double factor, std::size_t member_count)
 {
   loads.hull += factor * load.forces;
@@ -80,11 +74,21 @@ const Flotation& StageLoader::flotation(const StageState& state)
   return flotations_.back().second;
 }
 
+// Gravity acts square to the water a boat floats in, which its trim tilts against z.
+Vector3 StageLoader::gravity(const StageState& state)
+{
+  if (state.water == WaterState::none)
+    return Vector3::Zero();
+  const Vector3 up =
+      state.water == WaterState::afloat ? flotation(state).up : Vector3::UnitZ().eval();
+  return -standard_gravity * up;
+}
+
 void StageLoader::add_water(const StageState& state, StageLoads& loads)
 {
   if (state.water == WaterState::none)
     return;
-  loads.hull += gravity_forces(structure_);
+  loads.hull += gravity_forces(structure_, -gravity(state) / standard_gravity);
   // In a landing the patch is all the water there is.
   if (state.water == WaterState::afloat && !has_landing(state))
     add(loads, flotation(state).load, 1.0, structure_.members.size());
@@ -138,7 +142,7 @@ void StageLoader::add_temperature(const StageState& state, StageLoads& loads) co
 
 // A tank that is held carries exactly its mass times the felt acceleration; the rest of the craft
 // balances that and everything else by its own inertia.
-void StageLoader::balance(const StageState& state, StageLoads& loads) const
+void StageLoader::balance(const StageState& state, StageLoads& loads)
 {
   const Vector3 weight = gravity(state);
   std::vector<MassProperties> rest{structure_.mass_properties};

@@ -44,6 +44,7 @@ private:
   void add_water(const StageState& state, StageLoads& loads);
   void add_events(const StageState& state, StageLoads& loads) const;
   void add_temperature(const StageState& state, StageLoads& loads) const;
-  void balance(const StageState& state, StageLoads& loads) const;
+  void balance(const StageState& state, StageLoads& loads);
+  Vector3 gravity(const StageState& state);
 };
 } // namespace carlin

@@ -366,6 +366,20 @@ void require_tank(const Tank& tank)
 } // namespace
 } // namespace mounts
 
+namespace
+{
+// A tank is laid into the hull as it lies at the fitting: how far the hull gives under the tank's own
+// weight there is part of its shape, not a motion of the feet.
+VectorX give_at_fitting(const std::vector<Tank>& tanks, const MatrixX& flexibility,
+                        const MountStage& fitting, RangeEnd end)
+{
+  if (flexibility.isZero(0.0))
+    return VectorX::Zero(flexibility.rows());
+  const MatrixX stiff = MatrixX::Zero(flexibility.rows(), flexibility.cols());
+  return flexibility * run_history(tanks, stiff, {fitting}, end).front().foot_forces;
+}
+} // namespace
+
 std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
                                           const MatrixX& flexibility,
                                           const std::vector<MountStage>& stages, RangeEnd end)
@@ -390,8 +404,10 @@ std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
   Counters counters;
   counters.has_slipped.assign(model.slides.size(), false);
   LoadState from = zero_loads(model);
-  for (const MountStage& described : stages)
+  const VectorX give = give_at_fitting(tanks, flexibility, stages.front(), end);
+  for (MountStage described : stages)
   {
+    described.foot_motion -= give;
     const LoadState to = make_loads(model, described);
     Stage stage{model, from, to, difference(from, to)};
     counters.events = 0;

@@ -42,22 +42,28 @@ TextTable table_of(const std::vector<Check>& checks)
   return table;
 }
 
-void print_remarks(std::ostream& out, const std::vector<Check>& checks)
+/// Not met and not judged always; met from this utilisation on, and only of judged configurations.
+constexpr double shown_from = 0.5;
+
+bool is_printed(const Check& check, Standing standing)
 {
-  std::vector<std::pair<std::string, std::size_t>> remarks;
+  if (check.verdict == Verdict::not_met)
+    return true;
+  return standing == Standing::judged &&
+         (check.verdict == Verdict::not_judged || check.utilisation.value_or(0.0) >= shown_from);
+}
+
+/// What to ask for so that a check can be judged, once each.
+void print_missing_limits(std::ostream& out, const std::vector<Check>& checks)
+{
+  std::vector<std::string> said;
   for (const Check& check : checks)
-  {
-    if (check.remark.empty())
-      continue;
-    const auto known =
-        std::ranges::find(remarks, check.remark, &std::pair<std::string, std::size_t>::first);
-    if (known == remarks.end())
-      remarks.emplace_back(check.remark, 1);
-    else
-      ++known->second;
-  }
-  for (const auto& [remark, count] : remarks)
-    print_wrapped(out, fmt::format("- {} ({} check{})", remark, count, count == 1 ? "" : "s"), 2);
+    if (check.verdict == Verdict::not_judged && !check.remark.empty() &&
+        std::ranges::find(said, check.remark) == said.end())
+    {
+      said.push_back(check.remark);
+      print_wrapped(out, fmt::format("- {}: {}", check.name, check.remark), 2);
+    }
 }
 
 std::string counts(const std::vector<Check>& checks)
@@ -86,11 +92,20 @@ void print_checks(std::ostream& out, const RunResult& result)
           standing == Standing::judged ? "judged" : "shown, not counted";
       summary.push_back(
           fmt::format("{} ({}, {})", counts(checks), configuration.craft.name, standing_text));
-      if (checks.empty())
+      std::vector<Check> printed;
+      std::ranges::copy_if(checks, std::back_inserter(printed),
+                           [&](const Check& check) { return is_printed(check, standing); });
+      if (printed.empty())
         continue;
       out << fmt::format("checks, {} ({})\n", configuration.craft.name, standing_text);
-      print_table(out, table_of(checks));
-      print_remarks(out, checks);
+      print_table(out, table_of(printed));
+      if (standing == Standing::judged)
+        print_missing_limits(out, printed);
+      if (printed.size() < checks.size())
+        out << fmt::format("{} more {}, in checks.csv\n", checks.size() - printed.size(),
+                           standing == Standing::judged
+                               ? fmt::format("met below {:.2f}", shown_from)
+                               : "met or not judged");
       out << '\n';
     }
   if (summary.empty())

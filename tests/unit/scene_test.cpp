@@ -33,7 +33,8 @@ TEST_CASE("A scene shows the base and the last configuration warped alike", "[un
   CHECK(grid.GetPoint(3)[2] == Approx(0.1 + 10.0 * moved).epsilon(1e-6)); // P: float in the file
 }
 
-TEST_CASE("Colours span zero to the largest stress of both hulls, in MPa", "[unit][viz]")
+TEST_CASE("Colours are the largest stress of each cell in MPa, one range for both hulls",
+          "[unit][viz]")
 {
   const TestFolder folder("colours");
   write_results(folder.path() / "r", sample_result());
@@ -49,8 +50,19 @@ TEST_CASE("Colours span zero to the largest stress of both hulls, in MPa", "[uni
       CHECK(colours->GetComponent(cell, 0) >= 1e-6 * outer->GetComponent(cell, 0));
   }
   CHECK(scene.colour_range[0] == 0.0);
-  CHECK(scene.colour_range[1] == largest);
+  CHECK(scene.largest_stress == largest);
+  CHECK(scene.colour_range[1] == largest); // of eight cells none is left out
   CHECK(largest > 0.0);
+}
+
+TEST_CASE("Colours end where 98 of 100 cells do", "[unit][viz]")
+{
+  std::vector<double> values(100, 0.0);
+  for (std::size_t i = 0; i < values.size(); ++i)
+    values[values.size() - 1 - i] = static_cast<double>(i + 1);
+  CHECK(colour_top(values) == 98.0);
+  CHECK(colour_top({5.0}) == 5.0);
+  CHECK(colour_top({}) == 0.0);
 }
 
 TEST_CASE("Lightness of the colours rises throughout", "[unit][viz]")

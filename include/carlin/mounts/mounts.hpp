@@ -127,6 +127,8 @@ struct MountStageResult
 /// the state where it was lost). A tank pulled beyond friction runs to a stop in its way.
 /// @throws SolveError naming the collar that will not settle, and why; ValueError when sizes do not
 ///   match, or the first stage has growth or foot motion.
+/// What the hull gives under the tank's weight at the fitting is no motion of the feet: the tank is
+///   laid into the hull as it lies.
 /// A foot's spring stands at the foot's point under a rigid arm from the ring: feet whose moments
 ///   carry nothing must hold the seat up as a group. Point forces act on the axis. A tank free to
 ///   turn about its axis in every collar is taken not to turn. Rigid stops give 1e-16 m/N.

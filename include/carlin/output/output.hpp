@@ -38,8 +38,9 @@ struct RunResult
   std::string command_line;
 };
 
-/// Table of checks, at most 100 columns, worst first; counts met, not met, not judged.
-/// Only checks of `judged` configurations count; those shown are marked.
+/// Table of checks, at most 100 columns, worst first: not met and not judged, and met from half of
+/// the limit on; of configurations only shown those not met. Counts met, not met, not judged. Only
+/// checks of `judged` configurations count; those shown are marked.
 void print_checks(std::ostream& out, const RunResult& result);
 void print_quality(std::ostream& out, const MeshQuality& quality);
 void print_masses(std::ostream& out, const RunResult& result);
