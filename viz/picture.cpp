@@ -76,6 +76,8 @@ void add_hull(vtkRenderer& renderer, const Hull& hull, const Scene& scene, vtkLo
   actor->SetMapper(mapper);
   actor->GetProperty()->SetLineWidth(2.0F);
   actor->GetProperty()->SetInterpolationToFlat();
+  actor->GetProperty()->SetAmbient(0.5); // light enough that shade is not taken for stress
+  actor->GetProperty()->SetDiffuse(0.5);
   renderer.AddActor(actor);
   if (hull.tanks)
   {
@@ -101,7 +103,7 @@ void aim(vtkRenderer& renderer, const std::array<double, 6>& bounds, SeenFrom se
   camera.SetPosition(0.35, 1.0, seen_from == SeenFrom::above ? 0.65 : -0.65);
   camera.SetViewUp(0.0, 0.0, 1.0);
   renderer.ResetCamera(bounds.data());
-  camera.Zoom(1.6); // ResetCamera fits a sphere round a long thin boat
+  camera.Zoom(1.8); // ResetCamera fits a sphere round a long thin boat
   renderer.ResetCameraClippingRange();
 }
 

@@ -70,7 +70,7 @@ void warp(vtkPointSet& set, double scale)
 
 /// Adds the array the hull is coloured by; of members, which have no plate stress, the size of
 /// their own stress.
-double add_colours(vtkUnstructuredGrid& grid, const std::filesystem::path& file)
+std::vector<double> add_colours(vtkUnstructuredGrid& grid, const std::filesystem::path& file)
 {
   vtkFieldData& cells = *grid.GetCellData();
   const std::array<vtkDataArray*, 4> stresses{
@@ -80,7 +80,7 @@ double add_colours(vtkUnstructuredGrid& grid, const std::filesystem::path& file)
       &array(cells, "member stress, axial and bending [Pa]", file)};
   vtkNew<vtkDoubleArray> colours;
   colours->SetName(colour_name);
-  double largest = 0.0;
+  std::vector<double> values;
   for (vtkIdType cell = 0; cell < grid.GetNumberOfCells(); ++cell)
   {
     double value = 0.0;
@@ -88,13 +88,24 @@ double add_colours(vtkUnstructuredGrid& grid, const std::filesystem::path& file)
       if (const double found = std::abs(stress->GetComponent(cell, 0)); std::isfinite(found))
         value = std::max(value, 1e-6 * found);
     colours->InsertNextValue(value);
-    largest = std::max(largest, value);
+    values.push_back(value);
   }
   grid.GetCellData()->AddArray(colours);
   grid.GetCellData()->SetActiveScalars(colour_name);
-  return largest;
+  return values;
 }
 } // namespace
+
+double colour_top(std::vector<double> values)
+{
+  if (values.empty())
+    return 0.0;
+  constexpr double share = 0.98;
+  const auto place =
+      static_cast<std::ptrdiff_t>(std::ceil(share * static_cast<double>(values.size())) - 1.0);
+  std::ranges::nth_element(values, values.begin() + place);
+  return values[static_cast<std::size_t>(place)];
+}
 
 double round_scale(double value)
 {
@@ -131,6 +142,7 @@ Scene make_scene(const std::filesystem::path& results, const SceneOptions& optio
   Scene scene;
   scene.coloured_by = colour_name;
   double length = 0.0, largest = 0.0;
+  std::vector<double> stresses;
   for (const std::string& name : {options.before.empty() ? names.front() : options.before,
                                   options.after.empty() ? names.back() : options.after})
   {
@@ -146,11 +158,14 @@ Scene make_scene(const std::filesystem::path& results, const SceneOptions& optio
       hull.tanks = read<vtkXMLPolyDataReader>(tanks);
     hull.largest_displacement =
         largest_length(array(*hull.grid->GetPointData(), displacement_name, file));
-    scene.colour_range[1] = std::max(scene.colour_range[1], add_colours(*hull.grid, file));
+    const std::vector<double> values = add_colours(*hull.grid, file);
+    stresses.insert(stresses.end(), values.begin(), values.end());
     length = std::max(length, hull.grid->GetLength());
     largest = std::max(largest, hull.largest_displacement);
     scene.hulls.push_back(hull);
   }
+  scene.colour_range[1] = colour_top(stresses);
+  scene.largest_stress = stresses.empty() ? 0.0 : std::ranges::max(stresses);
   constexpr double share_of_length = 0.04;
   if (options.warp_scale)
     scene.warp_scale = *options.warp_scale;
@@ -162,8 +177,11 @@ Scene make_scene(const std::filesystem::path& results, const SceneOptions& optio
     if (hull.tanks)
       warp(*hull.tanks, scene.warp_scale);
   }
-  scene.caption = fmt::format("{}, {}; displacement drawn {:g} times", options.load_case,
-                              options.stage, scene.warp_scale);
+  scene.caption =
+      fmt::format("{}, {}; displacement drawn {:g} times; largest stress {:.0f} MPa, last colour "
+                  "from {:.0f} MPa on",
+                  options.load_case, options.stage, scene.warp_scale, scene.largest_stress,
+                  scene.colour_range[1]);
   return scene;
 }
 } // namespace carlin::viz

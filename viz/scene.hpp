@@ -27,7 +27,9 @@ struct Scene
   std::vector<Hull> hulls;              ///< before, after
   std::string caption;                  ///< case, stage and warp scale
   std::string coloured_by;              ///< cell array, name with unit
-  std::array<double, 2> colour_range{}; ///< [MPa]; the same for all hulls
+  std::array<double, 2> colour_range{}; ///< [MPa]; the same for all hulls; the few cells above it
+                                        ///< have its last colour
+  double largest_stress = 0.0;          ///< [MPa]
   double warp_scale = 1.0;              ///< displacements are drawn this many times their size
 };
 
@@ -44,6 +46,10 @@ Scene make_scene(const std::filesystem::path& results, const SceneOptions& optio
 
 /// Largest of 1, 2, 5 times a power of ten that is not above `value`. @pre value > 0 (asserted).
 double round_scale(double value);
+
+/// Value that 98 of 100 do not exceed: where colours end, so that a few hot cells do not make the
+/// rest look alike. Zero for no values.
+double colour_top(std::vector<double> values);
 
 /// Colour of a value from 0 to 1: dark blue over grey to yellow, lightness rising throughout, so
 /// that it also reads without red and green, and printed grey. Components 0 to 1.
