@@ -3,8 +3,8 @@
 # Those who may not install packages can hand the printed list to whoever may.
 set -eu
 run="g++ cmake ninja-build pkg-config libeigen3-dev libspectra-dev libyaml-cpp-dev libvtk9-dev
-libcli11-dev libudunits2-dev libfmt-dev libsuitesparse-dev"
-test="catch2 libbenchmark-dev xvfb xauth clang-format python3-vtk9"
+libcli11-dev libudunits2-dev libfmt-dev libsuitesparse-dev libopenblas0-pthread"
+test="catch2 python3 libbenchmark-dev libx11-dev xvfb xauth clang-format"
 case "${1:-run}" in
   run) wanted="$run" ;;
   test) wanted="$run $test" ;;

@@ -27,6 +27,16 @@ int rank(const Check& check)
   constexpr std::array ranks{2, 0, 1}; // met, not met, not judged
   return ranks[static_cast<std::size_t>(check.verdict)];
 }
+
+/// To eight figures: port and starboard of an even keel differ by round-off, which must not decide
+/// which of the two a table names.
+double rounded(double value)
+{
+  if (value == 0.0 || !std::isfinite(value))
+    return value;
+  const double scale = std::pow(10.0, 7.0 - std::floor(std::log10(std::abs(value))));
+  return std::round(value * scale) / scale;
+}
 } // namespace
 
 Check judged(Check check)
@@ -49,8 +59,12 @@ bool is_worse(const Check& a, const Check& b)
 {
   if (rank(a) != rank(b))
     return rank(a) < rank(b);
-  if (a.utilisation.value_or(0.0) != b.utilisation.value_or(0.0))
-    return a.utilisation.value_or(0.0) > b.utilisation.value_or(0.0);
-  return a.limit_from_below ? a.demand < b.demand : std::abs(a.demand) > std::abs(b.demand);
+  const double use_a = rounded(a.utilisation.value_or(0.0));
+  const double use_b = rounded(b.utilisation.value_or(0.0));
+  if (use_a != use_b)
+    return use_a > use_b;
+  const double demand_a = rounded(a.demand);
+  const double demand_b = rounded(b.demand);
+  return a.limit_from_below ? demand_a < demand_b : std::abs(demand_a) > std::abs(demand_b);
 }
 } // namespace carlin

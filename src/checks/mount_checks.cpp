@@ -41,11 +41,35 @@ void put_makers(const StageContext& context, const MakersLimit& item, const std:
   envelope.put(std::move(check), place);
 }
 
-/// Position of the section where a figure is largest.
+constexpr double noise = 1e-9; // round-off of a hull solution, relative to what produced it
+
+/// Position of the first section where a figure is largest, to round-off.
 template <typename Figure> double where_largest(const TankResult& tank, Figure figure)
 {
-  const auto found = std::ranges::max_element(tank.sections, {}, figure);
-  return found == tank.sections.end() ? 0.0 : found->position;
+  double largest = 0.0;
+  double position = 0.0;
+  for (const TankSection& section : tank.sections)
+    if (figure(section) > largest * (1.0 + noise))
+    {
+      largest = figure(section);
+      position = section.position;
+    }
+  return position;
+}
+
+/// Nothing, where a figure is round-off of the forces at the tank's collars.
+double less_noise(double figure, double scale)
+{
+  return std::abs(figure) < noise * scale ? 0.0 : figure;
+}
+
+/// Sum of the forces at a tank's collars [N].
+double collar_forces(const TankResult& tank)
+{
+  double sum = 0.0;
+  for (const CollarResult& collar : tank.collars)
+    sum += collar.force.head<3>().norm() + collar.clamping_force;
+  return sum;
 }
 
 void add_tank(const StageContext& context, const Tank& tank, const TankResult& found,
@@ -53,24 +77,31 @@ void add_tank(const StageContext& context, const Tank& tank, const TankResult& f
 {
   const Vector3 along = tank_axes(tank).col(0);
   const auto at = [&](double position) -> Vector3 { return tank.axis_from + position * along; };
+  const double forces = collar_forces(found);
+  const double moments = forces * (tank.axis_to - tank.axis_from).norm();
   put_makers(context,
-             {"tank axial force", "N", found.largest_axial_force, tank.limits.axial_force,
+             {"tank axial force", "N", less_noise(found.largest_axial_force, forces),
+              tank.limits.axial_force,
               "the largest axial force that its supports may put into the tank"},
              tank.name,
              at(where_largest(found, [](const TankSection& s) { return std::abs(s.axial_force); })),
              words, envelope);
   put_makers(context,
-             {"tank bending", "N m", found.largest_bending, tank.limits.bending_moment,
+             {"tank bending", "N m", less_noise(found.largest_bending, moments),
+              tank.limits.bending_moment,
               "the largest bending moment that its supports may put into the tank"},
              tank.name,
              at(where_largest(found, [](const TankSection& s) { return s.bending.norm(); })), words,
              envelope);
-  put_makers(context,
-             {"tank torsion", "N m", found.largest_torsion, tank.limits.torsion,
-              "the largest torsion that its supports may put into the tank"},
-             tank.name,
-             at(where_largest(found, [](const TankSection& s) { return std::abs(s.torsion); })),
-             words, envelope);
+  put_makers(
+      context,
+      {"tank torsion", "N m", less_noise(found.largest_torsion, moments), tank.limits.torsion,
+       "the largest torsion that its supports may put into the tank"},
+      tank.name,
+      at(found.largest_torsion < noise * moments
+             ? 0.0
+             : where_largest(found, [](const TankSection& s) { return std::abs(s.torsion); })),
+      words, envelope);
 }
 
 void add_collar(const StageContext& context, const Tank& tank, const Collar& collar,

@@ -5,6 +5,7 @@
 #include <fmt/format.h>
 #include <map>
 #include <numeric>
+#include <sstream>
 #include <yaml-cpp/yaml.h>
 
 namespace carlin::reading
@@ -37,6 +38,25 @@ std::string explained(const std::string& message)
   return fmt::format("the file is not YAML here: {}; check indentation, quotes and brackets",
                      one_line(message));
 }
+/// Line at which a second document starts or the first one ends: '---' after content, or '...'; 0:
+/// none.
+int second_document(const std::string& text)
+{
+  std::istringstream lines(text);
+  bool has_content = false;
+  int number = 0;
+  for (std::string line; std::getline(lines, line);)
+  {
+    ++number;
+    const bool is_marked = line.rfind("---", 0) == 0 || line.rfind("...", 0) == 0;
+    if (is_marked && (line.size() == 3 || std::isspace(static_cast<unsigned char>(line[3])) != 0) &&
+        (has_content || line[0] == '.'))
+      return number;
+    const std::size_t first = line.find_first_not_of(" \t\r");
+    has_content = has_content || (first != std::string::npos && line[first] != '#' && !is_marked);
+  }
+  return 0;
+}
 } // namespace
 
 Node::Node(std::shared_ptr<const Yaml> yaml, FileLocation from, std::string path,
@@ -56,14 +76,14 @@ Node Node::document(const std::string& text, const std::string& file, Findings& 
   const FileLocation start{file, 1, 1};
   try
   {
-    const std::vector<YAML::Node> documents = YAML::LoadAll(text);
-    if (documents.size() > 1)
-      findings.problems.push_back(
-          {start, fmt::format("the file holds {} YAML documents; a model is one document: remove "
-                              "the lines '---'",
-                              documents.size())});
-    else if (documents.size() == 1 && documents.front().IsMap())
-      return Node(std::make_shared<const Yaml>(Yaml{documents.front()}), start, "", findings);
+    // Not LoadAll: yaml-cpp 0.7 reads for ever where a document starts with a comma.
+    const YAML::Node document = YAML::Load(text);
+    if (const int line = second_document(text); line > 0)
+      findings.problems.push_back({{file, line, 1},
+                                   "a second YAML document starts here; a model is one document: "
+                                   "remove the lines '---' and '...'"});
+    else if (document.IsMap())
+      return Node(std::make_shared<const Yaml>(Yaml{document}), start, "", findings);
     else
       findings.problems.push_back(
           {start,

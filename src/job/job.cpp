@@ -2,6 +2,8 @@
 
 #include "stopwatch.hpp"
 
+#include "carlin/core/quantity.hpp"
+
 #include <algorithm>
 #include <fmt/format.h>
 
@@ -27,6 +29,41 @@ void require_known(const Model& model, const JobOptions& options)
   for (const std::string& name : options.cases)
     if (!is_there(model.cases, name))
       unknown("case", name, model.cases);
+}
+
+/// The reader cannot know the criteria; their names and units are checked here, before any work.
+void require_known_criteria(const Model& model)
+{
+  std::vector<Problem> problems;
+  for (const auto& [name, written] : model.criteria.written)
+  {
+    const auto place = model.criteria.where.find(name);
+    const FileLocation where = place == model.criteria.where.end()
+                                   ? FileLocation{model.file.string(), 0, 0}
+                                   : place->second;
+    const auto known = std::ranges::find(known_criteria(), name, &Criterion::name);
+    if (known == known_criteria().end())
+    {
+      std::string list;
+      for (const Criterion& criterion : known_criteria())
+        list += (list.empty() ? "" : ", ") + criterion.name;
+      problems.push_back(
+          {where,
+           fmt::format("criteria.{}: there is no such criterion; known are {}", name, list)});
+      continue;
+    }
+    try
+    {
+      quantity_in_si(written, known->dimension_unit == "N/m" ? Dimension::force_per_length
+                                                             : Dimension::none);
+    }
+    catch (const ValueError& error)
+    {
+      problems.push_back({where, fmt::format("criteria.{}: {}", name, error.what())});
+    }
+  }
+  if (!problems.empty())
+    throw ModelError(std::move(problems));
 }
 
 /// The base is always solved: the others are compared with it.
@@ -63,6 +100,7 @@ std::vector<std::string> bay_stations(const Model& model)
 RunResult run_job(const Model& model, const JobOptions& options)
 {
   require_known(model, options);
+  require_known_criteria(model);
   RunResult result;
   result.model = model;
   Stopwatch watch("craft", result.timings);
@@ -96,8 +134,7 @@ RunResult run_job(const Model& model, const JobOptions& options)
   }
   result.audit.displacement_stated = model.craft.displacement.value_or(0.0);
   result.audit.displacement_modelled = result.configurations.front().mass_properties.mass;
-  std::ranges::stable_sort(result.checks, [](const Check& a, const Check& b)
-                           { return a.utilisation.value_or(-1.0) > b.utilisation.value_or(-1.0); });
+  std::ranges::stable_sort(result.checks, is_worse);
   return result;
 }
 

@@ -24,7 +24,7 @@ void put_end(MemberStress& result, const MemberSection& section, const Vector6& 
   for (const Vector2& point : points)
   {
     const double stress = member_stress(section, forces, point);
-    if (std::abs(stress) > std::abs(result.nominal))
+    if (std::abs(stress) > std::abs(result.nominal) * (1.0 + 1e-9)) // first of equals
     {
       result.nominal = stress;
       result.place = place;

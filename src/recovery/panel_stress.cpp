@@ -100,7 +100,7 @@ void put(PanelStress& result, const SurfaceStress& stress, const Vector3& place)
   const double face = std::max(von_mises(stress.membrane + stress.bending),
                                von_mises(stress.membrane - stress.bending));
   result.membrane = std::max(result.membrane, von_mises(stress.membrane));
-  if (face > result.nominal)
+  if (face > result.nominal * (1.0 + 1e-9)) // first of equals, whatever the round-off
   {
     result.nominal = face;
     result.place = place;

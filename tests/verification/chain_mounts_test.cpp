@@ -233,3 +233,29 @@ TEST_CASE("G24: two tanks on one hull feel each other where they overlap", "[ver
   CHECK_THAT(c(limit, 0), WithinRel(34601.0677, tolerance));
   CHECK_THAT(c(limit, 1), WithinRel(2000.0, tolerance));
 }
+
+// Statics: m a on the tank, felt.
+TEST_CASE("A tank held at 20 g carries exactly 20 g", "[verification][chain]")
+{
+  const chain::Run run = chain::run("hold-20g");
+  const double weight = (115.0 + 7.5) * standard_gravity;
+  const auto sum = [&](const char* stage)
+  {
+    return Vector3(run.collar("fixed", stage).force.head<3>() +
+                   run.collar("sliding", stage).force.head<3>());
+  };
+  CHECK((sum("along") - Vector3(-20.0 * weight, 0.0, 0.0)).norm() < 1e-9 * 20.0 * weight);
+  CHECK((sum("across") - Vector3(0.0, -8.0 * weight, 0.0)).norm() < 1e-9 * 8.0 * weight);
+  CHECK((sum("down") - Vector3(0.0, 0.0, 5.0 * weight)).norm() < 1e-9 * 5.0 * weight);
+  CHECK((sum("full") - Vector3(0.0, 0.0, weight)).norm() < 1e-9 * weight);
+}
+
+// Coulomb on the foot's own load: half the weight and the bolts' preload.
+TEST_CASE("Where the foot slides, friction is on the foot's load and not on the clamping",
+          "[verification][chain]")
+{
+  const chain::Run run = chain::run("slides-at-foot");
+  const double foot_load = 0.5 * (115.0 + 7.5) * standard_gravity + 2000.0;
+  CHECK_THAT(compression(run, "full"), WithinRel(0.12 * foot_load, tolerance));
+  CHECK(run.collar("sliding", "full").clamping_force > 20000.0); // which would have carried more
+}

@@ -101,8 +101,10 @@ TEST_CASE("A tank's weight on a flexible hull follows its pivots", "[verificatio
     MountStage stage = quiet_stage(tanks, "weight");
     stage.tanks[0].mass = 12000.0 / standard_gravity;
     stage.tanks[0].felt = Vector3(0.0, 0.0, -standard_gravity);
-    const auto results = run_history(tanks, hull_flexibility(feet_g11), {stage}, RangeEnd::high);
-    const auto& collars = results.at(0).tanks[0].collars;
+    // the weight comes on after the fitting: at the fitting the hull lies as it lies
+    const auto results = run_history(tanks, hull_flexibility(feet_g11),
+                                     {quiet_stage(tanks, "fitting"), stage}, RangeEnd::high);
+    const auto& collars = results.at(1).tanks[0].collars;
     CHECK_THAT(-1e3 * collars[0].displacement.z(), WithinAbs(row.sag_a, 6e-7));
     CHECK_THAT(-1e3 * collars[1].displacement.z(), WithinAbs(row.sag_b, 6e-7));
     // the book counts moments anticlockwise in the plane of x and z: minus about y
