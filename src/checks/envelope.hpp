@@ -38,8 +38,9 @@ std::map<Index, std::size_t> worst_of_each(std::size_t count, SubjectOf subject_
   for (std::size_t i = 0; i < count; ++i)
   {
     const auto [place, is_new] = worst.emplace(subject_of(i), i);
-    // Not "greater": a demand that is no number must be kept, to be judged not met.
-    if (!is_new && !(demand_of(i) <= demand_of(place->second)))
+    // Not "greater": a demand that is no number must be kept, to be judged not met. And the first
+    // of equals, whatever the round-off between port and starboard.
+    if (!is_new && !(demand_of(i) <= demand_of(place->second) * (1.0 + 1e-9)))
       place->second = i;
   }
   return worst;

@@ -47,7 +47,7 @@ constexpr double noise = 1e-9; // round-off of a hull solution, relative to what
 template <typename Figure> double where_largest(const TankResult& tank, Figure figure)
 {
   double largest = 0.0;
-  double position = 0.0;
+  double position = tank.sections.empty() ? 0.0 : tank.sections.front().position;
   for (const TankSection& section : tank.sections)
     if (figure(section) > largest * (1.0 + noise))
     {

@@ -10,6 +10,9 @@ namespace carlin
 {
 namespace
 {
+/// To a whole number of steps, without a minus before nothing.
+double at_step(double value, double step) { return std::round(value / step) * step + 0.0; }
+
 constexpr double megapascal = 1e6; // remarks are read by people
 
 const MeshPart& part_of(const StageContext& context, Index part)
@@ -151,9 +154,9 @@ void add_joints(const StageContext& context, Envelope& envelope)
     check.unit = "N/m";
     check.limit = criterion_limit(context.model, "joint_load");
     cite(check, context.model, "joint_load");
-    check.remark =
-        fmt::format("along {:.3g}, across {:.3g}, normal {:.3g} kN/m, slip {:.2g} mm",
-                    load.along / 1e3, load.across / 1e3, load.normal / 1e3, load.slip * 1e3);
+    check.remark = fmt::format("along {:.2f}, across {:.2f}, normal {:.2f} kN/m, slip {:.3f} mm",
+                               at_step(load.along / 1e3, 0.01), at_step(load.across / 1e3, 0.01),
+                               at_step(load.normal / 1e3, 0.01), at_step(load.slip * 1e3, 0.001));
     if (!check.limit)
       check.remark += "; give joint_load, what bond, weld or bolts carry per metre";
     const JointSpring& spring = structure.joints[static_cast<std::size_t>(load.spring)];
