@@ -79,9 +79,12 @@ Node Node::document(const std::string& text, const std::string& file, Findings& 
     // Not LoadAll: yaml-cpp 0.7 reads for ever where a document starts with a comma.
     const YAML::Node document = YAML::Load(text);
     if (const int line = second_document(text); line > 0)
-      findings.problems.push_back({{file, line, 1},
+    {
+      const FileLocation second{file, line, 1};
+      findings.problems.push_back({second,
                                    "a second YAML document starts here; a model is one document: "
                                    "remove the lines '---' and '...'"});
+    }
     else if (document.IsMap())
       return Node(std::make_shared<const Yaml>(Yaml{document}), start, "", findings);
     else

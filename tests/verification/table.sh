@@ -2,13 +2,15 @@
 # Makes tests/verification/README.md from a run of the verification programs, or with --check compares
 # it with what a run prints (to the digits shown).   bash tests/verification/table.sh [--check] [BUILD]
 set -euo pipefail
+export LC_ALL=C
 cd "$(dirname "$0")/../.."
 check=no
 [ "${1:-}" = --check ] && { check=yes; shift; }
 build=${1:-build/dev}
 rows=$(mktemp) table=$(mktemp)
 trap 'rm -f "$rows" "$table"' EXIT
-for program in beams frames patches plates shells stress folded; do
+for program in element_beams element_folded element_frames element_patches element_plates element_shells \
+    element_stress warping; do
   CARLIN_VERIFICATION_CSV="$rows" "$build/tests/${program}_test" >/dev/null
 done
 {
