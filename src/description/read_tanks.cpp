@@ -161,7 +161,8 @@ const Section foot_section = {
 
 const Section stiffness_section = {
     "stiffness",
-    "Of one foot with its share of the seat, in the tank's axes, from the foot's place up to the ring. "
+    "Of one foot with its share of the seat, in the tank's axes, from the foot's place up to the "
+    "ring. "
     "`rigid` may be written for any; 0 carries nothing.",
     {
         of_form(Form::stiffness, "along", Dimension::force_per_length, "", Bound::not_negative),

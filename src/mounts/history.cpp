@@ -368,8 +368,8 @@ void require_tank(const Tank& tank)
 
 namespace
 {
-// A tank is laid into the hull as it lies at the fitting: how far the hull gives under the tank's own
-// weight there is part of its shape, not a motion of the feet.
+// A tank is laid into the hull as it lies at the fitting: how far the hull gives under the tank's
+// own weight there is part of its shape, not a motion of the feet.
 VectorX give_at_fitting(const std::vector<Tank>& tanks, const MatrixX& flexibility,
                         const MountStage& fitting, RangeEnd end)
 {

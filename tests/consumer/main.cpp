@@ -1,6 +1,5 @@
-#include <iostream>
-
 #include <carlin/job/job.hpp>
+#include <iostream>
 
 // Prints the fewest facts that prove the whole chain is linked: one configuration, one case solved.
 int main(int argument_count, char** arguments)

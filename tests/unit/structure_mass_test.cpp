@@ -36,7 +36,8 @@ Equipment engine()
   engine.name = "engine";
   engine.mass = 600.0;
   engine.centre = Vector3(2.0, 0.1, 0.55);
-  engine.footprints = {{.centre = Vector3(2.0, 0.0, 0.0), .length = 2.0, .width = 1.4, .parts = {}}};
+  engine.footprints = {
+      {.centre = Vector3(2.0, 0.0, 0.0), .length = 2.0, .width = 1.4, .parts = {}}};
   return engine;
 }
 } // namespace

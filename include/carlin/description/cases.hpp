@@ -61,7 +61,7 @@ struct Landing
   std::optional<double> acceleration; ///< of the centre of gravity, upward, n times g [m/s^2]
   bool by_standard = false;           ///< n from ISO 12215-5:2008, dynamic load factor
   std::optional<double> pressure;     ///< on the patch [Pa]; absent: two thirds of the standard's
-                                  ///< larger bottom base pressure, see loads
+                                      ///< larger bottom base pressure, see loads
   std::optional<double>
       length; ///< of the patch along x [m], with `pressure` and without `acceleration`
 };
