@@ -30,7 +30,11 @@ constexpr std::string_view is_an_event =
 
 const Section stage_section = {
     "stages",
-    "States persist until a later stage changes them; events act in their own stage.",
+    "States persist until a later stage changes them; events act in their own stage. Their removal "
+    "is "
+    "solved too: where tanks are aboard, a stage `after <name>` follows a stage with events, "
+    "unless "
+    "the next one says nothing new.",
     {
         word("water", "none|afloat|gravity",
              "nothing acts; gravity balanced by still water; gravity carried by supports")

@@ -46,3 +46,7 @@ file(MAKE_DIRECTORY ${system_folder}/twice)
 set_tests_properties("system: the same model run twice gives identical tables" PROPERTIES LABELS system)
 add_cli_test(unknown_criterion EXIT 2 MATCH "unknown-criterion.yaml:13:3: error: criteria.joint_loads: there is no such criterion; known are .*unknown-criterion.yaml:14:3: error: criteria.joint_load: '50 kN'"
   ABSENT ${system_folder}/criterion ARGS check tests/system/unknown-criterion.yaml --into ${system_folder}/criterion)
+add_cli_test(launch_is_judged EXIT 1 MATCH "met, [0-9]+ not met, [0-9]+ not judged \\(converted, judged\\)"
+  ARGS check models/survey-launch.yaml --into ${system_folder}/launch)
+add_cli_test(refine_says_how_far_each_check_moved EXIT 1 MATCH "Moved at half the mesh size.*member stress"
+  ARGS check models/starter.yaml --into ${system_folder}/refined --refine --case "landing forward")
