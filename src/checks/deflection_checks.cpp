@@ -45,6 +45,8 @@ void add_panels(const StageContext& context, Envelope& envelope)
                   part.plate_kind == PlateKind::bulkhead ? "bulkhead_panel_deflection"
                                                          : "panel_deflection",
                   panels[p].short_side);
+    if (panels[p].inner_nodes.empty()) // one cell across has no middle to read
+      check.limit.reset();
     envelope.put(std::move(check), panels[p].centre);
   }
 }

@@ -193,7 +193,7 @@ void add_held(const StageContext& context, const std::vector<MountEnd>& ends, En
         continue; // the history had ended before this stage
       Check check = stage_check(context, "tank held", tank.name);
       for (const std::string& message : end.result.not_held)
-        if (message.starts_with(tank.name + " "))
+        if (message.starts_with(tank.name + " is not held"))
         {
           check.demand += 1.0;
           check.remark = joined_remarks({check.remark, message});
@@ -214,7 +214,8 @@ void add_mount_checks(const StageContext& context, Envelope& envelope)
   const std::vector<Tank>& tanks = context.configuration.craft.tanks;
   const std::vector<MountEnd> ends{
       {context.stage.mounts_low, "friction and grip at their low end"},
-      {context.stage.mounts_high, "friction and grip at their high end"}};
+      {context.stage.mounts_high, "friction and grip at their high end"},
+      {context.stage.mounts_crossed, "friction at its high end, grip at its low"}};
   for (const MountEnd& end : ends)
     for (std::size_t t = 0; t < end.result.tanks.size(); ++t)
     {
@@ -225,7 +226,7 @@ void add_mount_checks(const StageContext& context, Envelope& envelope)
         const Collar& collar = tanks[t].collars[c];
         add_collar(context, tanks[t], collar, found.collars[c], end.words, envelope);
         add_stroke(context, tanks[t], collar, found.collars[c], end.words, envelope);
-        if (&end == &ends.front()) // holding is judged where it is least
+        if (&end != &ends[1]) // holding is judged where grip is least, whatever the friction
           add_grip(context, tanks[t], collar, found.collars[c], envelope);
       }
     }

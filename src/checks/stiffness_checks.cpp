@@ -33,6 +33,23 @@ void add_ratio(const CheckContext& context, const BayStiffness& bay, const std::
   envelope.put(std::move(check), std::nullopt);
 }
 
+/// Says aloud that the main comparison could not be made.
+void add_missing_bays(const CheckContext& context, Envelope& envelope)
+{
+  if (!context.model.hull)
+    return;
+  Check check;
+  check.name = "bending stiffness";
+  check.subject = "hull";
+  check.configuration = context.configuration.craft.name;
+  check.load_case = "unit bending";
+  check.unit = "-";
+  cite(check, context.model, "bending_stiffness_ratio");
+  check.remark = "the base has fewer than two upright bulkheads; name the stations that bound the "
+                 "bays, stiffness: {bays: [...]}";
+  envelope.put(std::move(check), std::nullopt);
+}
+
 void add_bay(const CheckContext& context, const BayStiffness& bay, const BayStiffness& base,
              const std::string& subject, const std::string& weight_remark, Envelope& envelope)
 {
@@ -51,9 +68,13 @@ void add_stiffness_checks(const CheckContext& context, const ConfigurationSoluti
                           Envelope& envelope)
 {
   const GirderStiffness& found = context.configuration.stiffness;
-  if (context.configuration.craft.standing == Standing::base || found.bays.empty() ||
-      base.stiffness.bays.empty())
+  if (&base == &context.configuration)
+    return; // nothing to compare with
+  if (found.bays.empty() || base.stiffness.bays.empty())
+  {
+    add_missing_bays(context, envelope);
     return;
+  }
   std::string weight;
   if (base.mass_properties.mass > 0.0)
     weight = fmt::format("the craft weighs {:.3f} times the base",

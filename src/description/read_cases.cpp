@@ -103,7 +103,7 @@ const Section growth_section = {
 
 const Section event_section = {
     "events",
-    "Each element of the list has one of these, and may have a factor.",
+    "Each element of the list has one of these, and may have a factor (a landing not).",
     {
         table(Form::section, "landing", "landing", "").optional("one event is due"),
         table(Form::section, "hold_tanks", "hold_tanks", "").optional("one event is due"),
@@ -295,6 +295,9 @@ void read_events(const Node& node, Stage& stage)
       {
         stage.events.emplace_back(kind.read(fields.node(kind.key)), factor);
         ++given;
+        if (std::holds_alternative<Landing>(stage.events.back().first) && fields.has("factor"))
+          element.complain("a landing takes no factor, it is balanced by its own acceleration; "
+                           "write the acceleration or the pressure wanted");
       }
     const bool has_only_refused =
         element.entries().size() > static_cast<std::size_t>(given) && given == 0;
@@ -418,7 +421,6 @@ Chapter case_chapter()
       landing:
         events:
           - landing: {place: forward, sides: both, acceleration: by standard}
-            factor: 1.1
       landing on one side:
         events:
           - landing: {place: amidships, sides: port, pressure: 60 kPa, length: 1.5 m}

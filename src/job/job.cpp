@@ -3,6 +3,7 @@
 #include "stopwatch.hpp"
 
 #include "carlin/core/quantity.hpp"
+#include "carlin/core/require.hpp"
 
 #include <algorithm>
 #include <fmt/format.h>
@@ -54,8 +55,13 @@ void require_known_criteria(const Model& model)
     }
     try
     {
-      quantity_in_si(written, known->dimension_unit == "N/m" ? Dimension::force_per_length
-                                                             : Dimension::none);
+      const double limit = require_positive(
+          "limit",
+          quantity_in_si(written, known->dimension_unit == "N/m" ? Dimension::force_per_length
+                                                                 : Dimension::none),
+          known->dimension_unit);
+      if (name.ends_with("_used") && limit > 1.0)
+        throw ValueError(fmt::format("limit is {:g}; a part that may be used is at most 1", limit));
     }
     catch (const ValueError& error)
     {

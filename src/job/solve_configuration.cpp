@@ -4,6 +4,7 @@
 #include "carlin/job/job.hpp"
 
 #include <algorithm>
+#include <array>
 #include <chrono>
 #include <cmath>
 #include <fmt/format.h>
@@ -86,8 +87,24 @@ double load_size(const Eigen::Ref<const VectorX>& forces)
   return sum;
 }
 
-void audit_stage(const Structure& structure, const HullSolver& solver, StageSolution& stage,
-                 Audit& audit)
+/// A result that fails its own audit is no result.
+void require_sound(const Audit& audit, const std::string& load_case, const std::string& stage)
+{
+  constexpr double largest = 1e-6;
+  const std::array<std::pair<const char*, double>, 3> figures{
+      {{"pins of a floating hull carry", audit.largest_pin_reaction},
+       {"the solver's residual is", audit.largest_solver_residual},
+       {"forces of a floating hull are out of balance by", audit.largest_force_imbalance}}};
+  for (const auto& [words, figure] : figures)
+    if (!(figure <= largest))
+      throw SolveError(
+          fmt::format("case '{}', stage '{}': {} {:.1e} of the load, more than {:.0e}; "
+                      "the structure is too soft or too stiff somewhere to be solved",
+                      load_case, stage, words, figure, largest));
+}
+
+void audit_stage(const Structure& structure, const HullSolver& solver, const std::string& load_case,
+                 StageSolution& stage, Audit& audit)
 {
   stage.largest_load = load_size(stage.applied);
   const VectorX reactions = solver.reactions(stage.displacement, stage.applied);
@@ -119,6 +136,31 @@ void audit_stage(const Structure& structure, const HullSolver& solver, StageSolu
       residual[support.freedom] += support.stiffness * stage.displacement[support.freedom];
   audit.largest_solver_residual =
       std::max(audit.largest_solver_residual, residual.norm() / stage.applied.norm());
+  require_sound(audit, load_case, stage.name);
+}
+
+/// True if the hull feels the collars otherwise at the low end of friction and grip.
+bool is_unlike(const MountStageResult& low, const MountStageResult& high)
+{
+  constexpr double noise = 1e-6;
+  return low.not_held.empty() &&
+         (low.foot_forces - high.foot_forces).norm() > noise * high.foot_forces.norm();
+}
+
+/// The same stage of the hull with the collar forces of the low end: the envelope is judged over
+/// both.
+StageSolution at_low_end(const StageSolution& stage, const HullAtFeet& hull,
+                         const MountStageResult& high, const MountStageResult& low)
+{
+  StageSolution other = stage;
+  other.name = stage.name + ", friction low";
+  const VectorX change = low.foot_forces - high.foot_forces;
+  other.applied += hull.weights * change;
+  other.displacement += hull.deflections * change;
+  other.mounts_low = {}; // both ends of the mounts stand with the stage itself
+  other.mounts_high = {};
+  other.mounts_crossed = {};
+  return other;
 }
 
 const MountStageResult* result_of(const std::vector<MountStageResult>& results, std::size_t stage)
@@ -154,11 +196,15 @@ CaseSolution solve_case(const Model& model, const ConfiguredCraft& craft,
 
   std::vector<MountStageResult> low;
   std::vector<MountStageResult> high;
+  std::vector<MountStageResult> crossed;
   if (!craft.tanks.empty())
   {
     const std::vector<MountStage> stages = mount_stages(states, loads, hull, displacements);
     low = run_history(craft.tanks, hull.flexibility, stages, RangeEnd::low);
     high = run_history(craft.tanks, hull.flexibility, stages, RangeEnd::high);
+    if (has_grip_range(craft.tanks))
+      crossed = run_history(craft.tanks, hull.flexibility, stages,
+                            RangeEnds{RangeEnd::high, RangeEnd::low});
   }
 
   CaseSolution result{load_case.name, load_case.load_class, {}};
@@ -173,6 +219,8 @@ CaseSolution solve_case(const Model& model, const ConfiguredCraft& craft,
     stage.notes = std::move(loads[s].notes);
     if (const MountStageResult* found = result_of(low, s))
       stage.mounts_low = *found;
+    if (const MountStageResult* found = result_of(crossed, s))
+      stage.mounts_crossed = *found;
     const MountStageResult* found = result_of(high, s);
     if (found != nullptr)
       stage.mounts_high = *found;
@@ -192,8 +240,12 @@ CaseSolution solve_case(const Model& model, const ConfiguredCraft& craft,
           std::max(audit.largest_mount_residual, found->equilibrium_residual);
     }
     if (solver != nullptr)
-      audit_stage(structure, *solver, stage, audit);
+      audit_stage(structure, *solver, load_case.name, stage, audit);
     result.stages.push_back(std::move(stage));
+    if (const MountStageResult* other = result_of(low, s); hull.weights.size() > 0 &&
+                                                           found != nullptr && other != nullptr &&
+                                                           is_unlike(*other, *found))
+      result.stages.push_back(at_low_end(result.stages.back(), hull, *found, *other));
   }
   return result;
 }

@@ -94,6 +94,18 @@ void StageLoader::add_water(const StageState& state, StageLoads& loads)
     add(loads, flotation(state).load, 1.0, structure_.members.size());
 }
 
+LandingLoad StageLoader::landing_patch(const Landing& landing, double mass) const
+{
+  try
+  {
+    return landing_load(structure_, landing, model_.craft, mass);
+  }
+  catch (const ValueError& error)
+  {
+    throw ModelError(landing.where, std::string("landing: ") + error.what());
+  }
+}
+
 void StageLoader::add_events(const StageState& state, StageLoads& loads) const
 {
   if (state.events == nullptr)
@@ -103,9 +115,7 @@ void StageLoader::add_events(const StageState& state, StageLoads& loads) const
   {
     if (const auto* landing = std::get_if<Landing>(&event))
     {
-      const LandingLoad patch =
-          landing_load(structure_, *landing, model_.craft, whole_craft(state).mass);
-      add(loads, patch.load, factor, members);
+      add(loads, landing_patch(*landing, whole_craft(state).mass).load, factor, members);
     }
     else if (const auto* force = std::get_if<DirectForce>(&event))
       add(loads, direct_force(structure_, *force), factor, members);

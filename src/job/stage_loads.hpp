@@ -42,6 +42,7 @@ private:
   const Flotation& flotation(const StageState& state);
   MassProperties whole_craft(const StageState& state) const;
   void add_water(const StageState& state, StageLoads& loads);
+  LandingLoad landing_patch(const Landing& landing, double mass) const;
   void add_events(const StageState& state, StageLoads& loads) const;
   void add_temperature(const StageState& state, StageLoads& loads) const;
   void balance(const StageState& state, StageLoads& loads);

@@ -371,18 +371,19 @@ namespace
 // A tank is laid into the hull as it lies at the fitting: how far the hull gives under the tank's
 // own weight there is part of its shape, not a motion of the feet.
 VectorX give_at_fitting(const std::vector<Tank>& tanks, const MatrixX& flexibility,
-                        const MountStage& fitting, RangeEnd end)
+                        const MountStage& fitting, RangeEnds ends)
 {
   if (flexibility.isZero(0.0))
     return VectorX::Zero(flexibility.rows());
+  // (a tank lost in the fitting itself has no foot forces; the history then ends there)
   const MatrixX stiff = MatrixX::Zero(flexibility.rows(), flexibility.cols());
-  return flexibility * run_history(tanks, stiff, {fitting}, end).front().foot_forces;
+  return flexibility * run_history(tanks, stiff, {fitting}, ends).front().foot_forces;
 }
 } // namespace
 
 std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
                                           const MatrixX& flexibility,
-                                          const std::vector<MountStage>& stages, RangeEnd end)
+                                          const std::vector<MountStage>& stages, RangeEnds ends)
 {
   using namespace mounts;
   for (const Tank& tank : tanks)
@@ -399,12 +400,12 @@ std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
     }
     return results;
   }
-  const Model model = make_model(tanks, flexibility, end);
+  const Model model = make_model(tanks, flexibility, ends);
   Position position{VectorX::Zero(model.size), Regime(model.slides.size()), {}};
   Counters counters;
   counters.has_slipped.assign(model.slides.size(), false);
   LoadState from = zero_loads(model);
-  const VectorX give = give_at_fitting(tanks, flexibility, stages.front(), end);
+  const VectorX give = give_at_fitting(tanks, flexibility, stages.front(), ends);
   for (MountStage described : stages)
   {
     described.foot_motion -= give;
@@ -414,9 +415,12 @@ std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
     const std::string not_held = StageRun(stage, position, counters).run();
     if (!not_held.empty())
     {
-      if (results.empty())
-        results.push_back(make_result(model, tanks, described, position, counters));
-      results.back().not_held.push_back(not_held + " (stage " + described.name + ")");
+      MountStageResult lost;
+      lost.name = described.name;
+      lost.foot_forces = VectorX::Zero(flexibility.rows());
+      lost.work_lost = results.empty() ? 0.0 : results.back().work_lost;
+      lost.not_held.push_back(not_held);
+      results.push_back(std::move(lost));
       return results;
     }
     results.push_back(make_result(model, tanks, described, position, counters));
@@ -424,5 +428,15 @@ std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
     from = to;
   }
   return results;
+}
+
+bool has_grip_range(const std::vector<Tank>& tanks)
+{
+  for (const Tank& tank : tanks)
+    for (const Collar& collar : tank.collars)
+      if (collar.kind == CollarKind::fixed && collar.grip_force &&
+          collar.grip_force->low < collar.grip_force->high)
+        return true;
+  return false;
 }
 } // namespace carlin

@@ -178,6 +178,15 @@ Vector2 slip_of(const Slide& slide, const VectorX& x)
   return {x(slide.first + 1), slide.has_turn ? x(slide.first + 4) : 0.0};
 }
 
+namespace
+{
+/// Normal load that the bolts of a sliding foot put on its plate [N].
+double bolt_preload(const Slide& slide)
+{
+  return slide.coefficient > 0.0 ? slide.constant / slide.coefficient : 0.0;
+}
+} // namespace
+
 Limit slide_limit(const Model& model, Index index, const Status& status, const LoadState& now,
                   const LoadState& rate, const VectorX& x)
 {
@@ -213,13 +222,15 @@ Limit slide_limit(const Model& model, Index index, const Status& status, const L
     limit.gradient.segment<2>(across) = slide.coefficient * direction;
     return limit;
   }
+  // Uplift takes the bolts' preload off the plate before the foot lifts.
   const VectorX press = press_gradient(model, slide);
-  const double value = press.dot(x) + now.press(index);
+  const double value = bolt_preload(slide) + press.dot(x) + now.press(index);
   const double press_rate = rate.press(index);
   const bool is_pressed = value > 0.0 || (value == 0.0 && status.transverse.x() > 0.0);
+  limit.value = 0.0;
   if (is_pressed)
   {
-    limit.value += slide.coefficient * value;
+    limit.value = slide.coefficient * value;
     limit.gradient = slide.coefficient * press;
     limit.rate = slide.coefficient * press_rate;
   }
@@ -235,8 +246,8 @@ double contact_margin(const Model& model, Index index, const LoadState& now, con
     return model.rings[static_cast<std::size_t>(r)].stiffness *
            (now.interference(r) + ring_state(model, r, now, x).distance);
   }
-  if (slide.kind == LimitKind::foot && slide.constant == 0.0)
-    return press_gradient(model, slide).dot(x) + now.press(index);
+  if (slide.kind == LimitKind::foot)
+    return bolt_preload(slide) + press_gradient(model, slide).dot(x) + now.press(index);
   return std::numeric_limits<double>::infinity();
 }
 

@@ -36,7 +36,7 @@ struct CollarPlace
 };
 
 void add_ring_slide(Model& model, const Tank& tank, const Collar& collar, const CollarPlace& place,
-                    RangeEnd end)
+                    RangeEnds ends)
 {
   Slide slide;
   slide.tank = place.tank;
@@ -48,18 +48,18 @@ void add_ring_slide(Model& model, const Tank& tank, const Collar& collar, const 
     throw ValueError("tank " + tank.name + ": diameter is 0; turning friction at collar " +
                      collar.name + " needs it, write the tank's outside diameter");
   if (collar.kind == CollarKind::fixed)
-    slide.constant = at_end(*collar.grip_force, end);
+    slide.constant = at_end(*collar.grip_force, ends.grips);
   else
   {
     const bool clamps = collar.ring && collar.slides_at == SlidesAt::lining;
     slide.kind = clamps ? LimitKind::ring : LimitKind::transverse;
-    slide.coefficient = at_end(collar.friction, end);
+    slide.coefficient = at_end(collar.friction, ends.slides);
     set_stops(slide, collar, 1.0);
   }
   model.slides.push_back(slide);
 }
 
-void add_foot_slides(Model& model, const Collar& collar, const CollarPlace& place, RangeEnd end)
+void add_foot_slides(Model& model, const Collar& collar, const CollarPlace& place, RangeEnds ends)
 {
   double sliding_count = 0.0;
   for (const Foot& foot : collar.feet)
@@ -76,7 +76,7 @@ void add_foot_slides(Model& model, const Collar& collar, const CollarPlace& plac
     slide.collar = place.collar;
     slide.foot = place.first_foot + static_cast<Index>(f);
     slide.kind = LimitKind::foot;
-    slide.coefficient = at_end(collar.friction, end);
+    slide.coefficient = at_end(collar.friction, ends.slides);
     slide.constant = slide.coefficient * collar.foot_bolt_preload;
     // A foot above the tank is pressed by an upward force on the hull.
     const double height = beam.axes.col(2).dot(foot.footprint.centre - centre);
@@ -86,7 +86,7 @@ void add_foot_slides(Model& model, const Collar& collar, const CollarPlace& plac
   }
 }
 
-void list_parts(Model& model, const std::vector<Tank>& tanks, RangeEnd end)
+void list_parts(Model& model, const std::vector<Tank>& tanks, RangeEnds ends)
 {
   Index foot = 0;
   for (const Tank& tank : tanks)
@@ -105,9 +105,9 @@ void list_parts(Model& model, const std::vector<Tank>& tanks, RangeEnd end)
             {place.collar, collar.ring->radius * collar.ring->width * collar.ring->bed_stiffness,
              collar.ring->preload, collar.ring->bed_stiffness});
       if (collar.kind == CollarKind::sliding && collar.slides_at == SlidesAt::foot)
-        add_foot_slides(model, collar, place, end);
+        add_foot_slides(model, collar, place, ends);
       else if (collar.kind == CollarKind::sliding || collar.grip_force)
-        add_ring_slide(model, tank, collar, place, end);
+        add_ring_slide(model, tank, collar, place, ends);
       foot += static_cast<Index>(collar.feet.size());
       ++model.collar_count;
     }
@@ -251,10 +251,10 @@ void fill_slide_rows(Model& model)
 }
 } // namespace
 
-Model make_model(const std::vector<Tank>& tanks, const MatrixX& flexibility, RangeEnd end)
+Model make_model(const std::vector<Tank>& tanks, const MatrixX& flexibility, RangeEnds ends)
 {
   Model model;
-  list_parts(model, tanks, end);
+  list_parts(model, tanks, ends);
   std::vector<Index> sliding_feet;
   for (const Slide& slide : model.slides)
     if (slide.foot >= 0)

@@ -71,7 +71,7 @@ struct Model
 };
 
 /// @throws ValueError when the description cannot be modelled.
-Model make_model(const std::vector<Tank>& tanks, const MatrixX& flexibility, RangeEnd end);
+Model make_model(const std::vector<Tank>& tanks, const MatrixX& flexibility, RangeEnds ends);
 
 /// All that depends linearly on how far a stage has gone.
 struct LoadState

@@ -41,10 +41,12 @@ void append(std::vector<CsvField>& fields, const std::vector<CsvField>& more)
 std::vector<MountsAt> mounts_of(const StageSolution& stage)
 {
   std::vector<MountsAt> both;
-  if (!stage.mounts_low.tanks.empty())
+  if (!stage.mounts_low.tanks.empty() || !stage.mounts_low.not_held.empty())
     both.push_back({"low", &stage.mounts_low});
-  if (!stage.mounts_high.tanks.empty())
+  if (!stage.mounts_high.tanks.empty() || !stage.mounts_high.not_held.empty())
     both.push_back({"high", &stage.mounts_high});
+  if (!stage.mounts_crossed.tanks.empty() || !stage.mounts_crossed.not_held.empty())
+    both.push_back({"high, grip low", &stage.mounts_crossed});
   return both;
 }
 
@@ -148,22 +150,29 @@ std::string tanks_csv(const RunResult& result)
                   "largest axial force, compression + [N]", "largest bending [N m]",
                   "largest torsion [N m]", "work lost by friction, all tanks [J]",
                   "out of equilibrium [-]", "not held"});
-  for_each_occasion(result,
-                    [&](const Occasion& at)
-                    {
-                      std::string not_held;
-                      for (const std::string& text : at.mounts.not_held)
-                        not_held += (not_held.empty() ? "" : "; ") + text;
-                      for (std::size_t t = 0; t < at.mounts.tanks.size(); ++t)
-                      {
-                        const TankResult& tank = at.mounts.tanks[t];
-                        std::vector<CsvField> row = key_of(at, at.configuration.craft.tanks[t]);
-                        append(row, {tank.largest_axial_force, tank.largest_bending,
-                                     tank.largest_torsion, at.mounts.work_lost,
-                                     at.mounts.equilibrium_residual, not_held});
-                        table.add(row);
-                      }
-                    });
+  for_each_occasion(
+      result,
+      [&](const Occasion& at)
+      {
+        std::string not_held;
+        for (const std::string& text : at.mounts.not_held)
+          not_held += (not_held.empty() ? "" : "; ") + text;
+        if (at.mounts.tanks.empty()) // lost: no figures, but a line a tank
+          for (const Tank& tank : at.configuration.craft.tanks)
+          {
+            std::vector<CsvField> row = key_of(at, tank);
+            append(row, {CsvField(), CsvField(), CsvField(), CsvField(), CsvField(), not_held});
+            table.add(row);
+          }
+        for (std::size_t t = 0; t < at.mounts.tanks.size(); ++t)
+        {
+          const TankResult& tank = at.mounts.tanks[t];
+          std::vector<CsvField> row = key_of(at, at.configuration.craft.tanks[t]);
+          append(row, {tank.largest_axial_force, tank.largest_bending, tank.largest_torsion,
+                       at.mounts.work_lost, at.mounts.equilibrium_residual, not_held});
+          table.add(row);
+        }
+      });
   return table.text();
 }
 } // namespace carlin

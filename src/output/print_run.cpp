@@ -162,6 +162,15 @@ void print_audit(std::ostream& out, const RunResult& result)
   else
     out << fmt::format("displacement of the base: modelled {:.0f} kg, none stated\n",
                        audit.displacement_modelled);
+  if (const auto& stated = result.model.craft.centre_of_gravity;
+      stated && audit.displacement_stated > 0.0 && !result.configurations.empty())
+  {
+    const Vector3 off = result.configurations.front().mass_properties.centre - *stated;
+    out << fmt::format("centre of gravity of the base less the stated one: x {:+.3f}, y {:+.3f}, z "
+                       "{:+.3f} m\n(the outfit is spread so that x agrees; y and z follow from the "
+                       "hull's shape)\n",
+                       off.x(), off.y(), off.z());
+  }
   for (const Timing& timing : result.timings)
     out << fmt::format("{:8.2f} s  {}\n", timing.seconds, timing.stage);
 }

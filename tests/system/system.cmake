@@ -50,3 +50,5 @@ add_cli_test(launch_is_judged EXIT 1 MATCH "met, [0-9]+ not met, [0-9]+ not judg
   ARGS check models/survey-launch.yaml --into ${system_folder}/launch)
 add_cli_test(refine_says_how_far_each_check_moved EXIT 1 MATCH "Moved at half the mesh size.*member stress"
   ARGS check models/starter.yaml --into ${system_folder}/refined --refine --case "landing forward")
+add_cli_test(tank_not_held_is_a_check_not_met EXIT 1 MATCH "NOT MET +tank held .*pulled"
+  ARGS check tests/system/not-held.yaml --into ${system_folder}/not-held)

@@ -52,6 +52,13 @@ enum class RangeEnd
   high
 };
 
+/// Ends at which a history is run: friction of slides, grips of fixed collars.
+struct RangeEnds
+{
+  RangeEnd slides = RangeEnd::high;
+  RangeEnd grips = RangeEnd::high;
+};
+
 enum class Hold
 {
   keyed, ///< fixed, by a key
@@ -122,9 +129,9 @@ struct MountStageResult
 /// @param flexibility Motion of all feet under unit forces at all feet, 6 nf x 6 nf, global axes;
 /// hull's
 ///   rigid motion may be in it in any determinate way. Zero: rigid bed.
-/// @return One result a stage; fewer when a tank is not held any more: the last then carries
-/// `not_held` and the name of the stage that failed (lost in the fitting itself: one result, with
-/// the state where it was lost). A tank pulled beyond friction runs to a stop in its way.
+/// @return One result a stage; fewer when a tank is not held any more: the last is then that of the
+/// stage where it was lost, with `not_held`, no tanks and no foot forces. A tank pulled beyond
+/// friction runs to a stop in its way.
 /// @throws SolveError naming the collar that will not settle, and why; ValueError when sizes do not
 ///   match, or the first stage has growth or foot motion.
 /// What the hull gives under the tank's weight at the fitting is no motion of the feet: the tank is
@@ -138,5 +145,17 @@ struct MountStageResult
 ///   disc (Alart & Curnier 1991), stages cut at events.
 std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
                                           const MatrixX& flexibility,
-                                          const std::vector<MountStage>& stages, RangeEnd end);
+                                          const std::vector<MountStage>& stages, RangeEnds ends);
+
+/// The same with slides and grips at one end.
+inline std::vector<MountStageResult> run_history(const std::vector<Tank>& tanks,
+                                                 const MatrixX& flexibility,
+                                                 const std::vector<MountStage>& stages,
+                                                 RangeEnd end)
+{
+  return run_history(tanks, flexibility, stages, RangeEnds{end, end});
+}
+
+/// True if a fixed collar's grip has a range: then slides and grips are run at crossed ends too.
+bool has_grip_range(const std::vector<Tank>& tanks);
 } // namespace carlin

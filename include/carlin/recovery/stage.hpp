@@ -36,6 +36,8 @@ struct StageSolution
   Vector6 pin_reaction = Vector6::Zero();   ///< resultant about the origin; audit
   double largest_load = 0.0;                ///< norm the audit compares with [N]
   MountStageResult mounts_low, mounts_high; ///< slides and grips at the low and the high end
+  MountStageResult mounts_crossed; ///< slides at the high end, grips at the low: what a slide that
+                                   ///< locks does to a grip; empty where no grip has a range
   std::vector<LoadNote> notes;
 };
 } // namespace carlin
