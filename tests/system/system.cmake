@@ -52,3 +52,6 @@ add_cli_test(refine_says_how_far_each_check_moved EXIT 1 MATCH "Moved at half th
   ARGS check models/starter.yaml --into ${system_folder}/refined --refine --case "landing forward")
 add_cli_test(tank_not_held_is_a_check_not_met EXIT 1 MATCH "NOT MET +tank held .*pulled"
   ARGS check tests/system/not-held.yaml --into ${system_folder}/not-held)
+# too long under the sanitizers
+set_tests_properties("system: launch_is_judged" "system: refine_says_how_far_each_check_moved"
+  PROPERTIES LABELS "system;slow")
