@@ -87,7 +87,8 @@ Matrix2 lever_moment()
 
 Matrix12 end_motion(const MemberGeometry& geometry, const MemberFrame& frame)
 {
-  const Matrix3 turn = frame.axes.transpose();
+  Matrix3 turn = Matrix3::Zero(); // g++ 12 warns without cause under the sanitizers otherwise
+  turn = frame.axes.transpose();
   Matrix12 motion = Matrix12::Zero();
   for (Index i = 0; i < 4; ++i)
     motion.block<3, 3>(3 * i, 3 * i) = turn;
@@ -144,7 +145,8 @@ MemberForces member_forces(const MemberGeometry& geometry, const MemberSection& 
 {
   const Vector12 nodal = member_stiffness(geometry, section) * displacement - fixed_end;
   const MemberFrame frame = member_frame(geometry);
-  const Matrix3 turn = frame.axes.transpose();
+  Matrix3 turn = Matrix3::Zero(); // g++ 12 warns without cause under the sanitizers otherwise
+  turn = frame.axes.transpose();
   MemberForces forces;
   // Moments about the centroid: the nodal force acts at the far end of the arm. The force on the
   // positive face of end 1 is the reaction of what acts on the member there.

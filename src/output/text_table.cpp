@@ -61,7 +61,7 @@ std::vector<std::size_t> column_widths(const TextTable& table)
 }
 
 void print_line(std::ostream& out, const std::vector<std::string>& texts,
-                const std::vector<std::size_t>& widths, const std::vector<Column>& columns)
+                const std::vector<std::size_t>& widths, const std::vector<TextColumn>& columns)
 {
   std::string line;
   for (std::size_t c = 0; c < columns.size(); ++c)

@@ -13,7 +13,7 @@ enum class Align
   right
 };
 
-struct Column
+struct TextColumn
 {
   std::string heading;
   Align align = Align::left;
@@ -25,7 +25,7 @@ struct Column
 /// texts end in "..".
 struct TextTable
 {
-  std::vector<Column> columns;
+  std::vector<TextColumn> columns;
   std::vector<std::vector<std::string>> rows; ///< one text a column
 };
 
