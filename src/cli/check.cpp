@@ -54,6 +54,10 @@ int run_check(const CheckOptions& options)
   const Model model = read_model(options.model);
   for (const std::string& warning : warnings(model))
     std::cerr << options.model << ": warning: " << warning << '\n';
+  for (const Tank& tank : model.tanks)
+    if (!(tank.torsional_stiffness > 0.0))
+      std::cerr << options.model << ": note: " << tank.name
+                << ": torsional_stiffness is not given; bending_stiffness / 1.3 is taken\n";
 
   RunResult result = run_job(model, options.job);
   result.command_line = options.command_line;
